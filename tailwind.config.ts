@@ -14,6 +14,7 @@ export default {
       ink: 'var(--ink)',
       soft: 'var(--soft)',
       hair: 'var(--hair)',
+      edge: 'var(--edge)',
       focus: 'var(--focus)',
       ok: 'var(--ok)',
       look: 'var(--look)',

@@ -1,0 +1,71 @@
+import type { Fault } from '../../shared/contracts/api';
+import type { Change, Row } from '../../shared/contracts/changes';
+import { identityOf, rowSchemas } from '../../shared/domain/assemble';
+import type { Edit } from '../../shared/domain/edits';
+
+/** The client's own idea of what a change does, until the server's answer takes its place. */
+
+export const rowKey = (resource: string, key: string): string => `${resource} ${key}`;
+export type Rows = ReadonlyMap<string, Row>;
+
+const withFields = (before: Record<string, unknown>, fields: Record<string, unknown>): Record<string, unknown> =>
+  Object.fromEntries(Object.entries({ ...before, ...fields }).filter(([, value]) => value !== null && value !== undefined));
+
+/** The row after one change; absent where there is nothing to change. */
+function rowAfter(rows: Rows, edit: Edit, revision: number): Row | undefined {
+  const before = rows.get(rowKey(edit.resource, edit.key));
+  if (edit.op === 'create') {
+    const position = before?.position ?? lastPosition(rows, edit) + 1;
+    return { resource: edit.resource, key: edit.key, revision, position, removed: false, fields: withFields({}, edit.fields) };
+  }
+  if (!before) return undefined;
+  if (edit.op === 'update') return { ...before, revision, fields: withFields(before.fields, edit.fields) };
+  return { ...before, revision, removed: edit.op === 'remove' };
+}
+
+function lastPosition(rows: Rows, edit: Edit): number {
+  let last = -1;
+  for (const row of rows.values()) if (row.resource === edit.resource && row.position > last) last = row.position;
+  return last;
+}
+
+/** The rows as they would stand after the edits. */
+export function rowsAfter(rows: Rows, edits: Edit[], revision: number): Rows {
+  const next = new Map(rows);
+  for (const edit of edits) {
+    const row = rowAfter(next, edit, revision);
+    if (row) next.set(rowKey(edit.resource, edit.key), row);
+  }
+  return next;
+}
+
+/** A row that was removed is brought back and then set, so that its history goes on; everything else passes as it is. */
+export function revived(rows: Rows, edits: Edit[]): Edit[] {
+  return edits.flatMap((edit): Edit[] => {
+    const before = rows.get(rowKey(edit.resource, edit.key));
+    if (edit.op !== 'create' || !before?.removed) return [edit];
+    const cleared = Object.fromEntries(Object.keys(before.fields).map((field) => [field, null]));
+    const identity = identityOf(edit.resource, edit.key);
+    const fields = Object.fromEntries(Object.entries({ ...cleared, ...edit.fields }).filter(([field]) => !(field in identity)));
+    return [
+      { ...edit, op: 'restore', fields: {} },
+      { ...edit, op: 'update', fields },
+    ];
+  });
+}
+
+/** What is wrong with the rows that the edits touch, by the contract; nothing when all is well. */
+export function faultsAfter(rows: Rows, edits: Edit[]): Fault[] {
+  const after = rowsAfter(rows, edits, 0);
+  return edits.flatMap((edit): Fault[] => {
+    const row = after.get(rowKey(edit.resource, edit.key));
+    if (!row || row.removed) return [];
+    const parsed = rowSchemas[edit.resource].safeParse({ ...identityOf(edit.resource, edit.key), ...row.fields });
+    if (parsed.success) return [];
+    return parsed.error.issues.map((issue) => ({ path: [edit.resource, edit.key, ...issue.path].join('.'), expected: issue.message }));
+  });
+}
+
+export function toChanges(edits: Edit[], newId: () => string): Change[] {
+  return edits.map(({ resource, key, op, fields }) => ({ id: newId(), resource, key, op, fields }));
+}
