@@ -275,6 +275,8 @@ export const pass = z.object({
   together: list(passId).optional(),
   apart: list(passId).optional(),
   pin: pin.optional(),
+  /** Left out of the plan by hand: it is not placed, and a must that is left out is not missing. */
+  leftOut: flag.optional(),
   note: text().optional(),
   extra,
 });
