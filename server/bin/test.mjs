@@ -15,6 +15,7 @@ const CHECKS = [
   ['Types of the app', ...tool('vue-tsc', '--noEmit', '-p', 'tsconfig.app.json')],
   ['Types of the server and the tests', ...tool('tsc', '--noEmit', '-p', 'tsconfig.node.json')],
   ['Types of shared/', ...tool('tsc', '--noEmit', '-p', 'tsconfig.shared.json')],
+  ['Types of the tests in a browser', ...tool('tsc', '--noEmit', '-p', 'tsconfig.browser-tests.json')],
 ];
 
 for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(signal, () => void endAll().then(() => process.exit(130)));

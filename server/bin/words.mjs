@@ -48,7 +48,7 @@ export function troubleFrom(what, output) {
   if (FULL.test(output)) return new Trouble(`${what}: the disk is full.`, 'Free about 1 GB (df -h shows where), then start again.');
   if (OFFLINE.test(output))
     return new Trouble(
-      `${what}: the network did not answer.\n${tail}`,
+      `${what}: the network did not answer.\n${output.split('\n').find((line) => OFFLINE.test(line))}`,
       'Connect this machine to the network (only this step needs it), then start again.',
     );
   return new Trouble(`${what} did not work. Its last words:\n${tail}`, 'Mend that, then start again; what is done already is kept.');

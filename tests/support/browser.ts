@@ -1,0 +1,107 @@
+import fs from 'node:fs';
+import { createRequire } from 'node:module';
+import type { AxeResults } from 'axe-core';
+import puppeteer, { type Browser, type KeyInput, type Page, type SerializedAXNode } from 'puppeteer-core';
+
+const axeSource = fs.readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
+
+/** Debian's Chromium without the connections that it makes of its own accord. */
+export const openBrowser = (): Promise<Browser> =>
+  puppeteer.launch({
+    executablePath: process.env.CHROMIUM ?? '/usr/bin/chromium',
+    headless: true,
+    pipe: true,
+    args: [
+      '--no-sandbox', // only pages of our own are opened, and as root it would not start
+      '--disable-gpu',
+      '--disable-dev-shm-usage',
+      '--disable-quic',
+      '--no-first-run',
+      '--disable-background-networking',
+      '--disable-component-update',
+      '--disable-sync',
+      '--disable-extensions',
+      '--font-render-hinting=none',
+    ],
+  });
+
+export type Theme = 'paper' | 'dim';
+
+export interface Visit {
+  page: Page;
+  /** What went wrong so far: console errors, uncaught errors, requests to other machines. */
+  complaints: string[];
+}
+
+/** Opens an empty page in a browser context of its own (own cookies, storage and service worker). */
+export async function visit(browser: Browser, { width = 1280, height = 800 } = {}): Promise<Visit> {
+  const context = await browser.createBrowserContext();
+  const page = await context.newPage();
+  await page.setViewport({ width, height });
+  const complaints: string[] = [];
+  page.on('console', (message) => {
+    if (message.type() === 'error') complaints.push(message.text());
+  });
+  page.on('pageerror', (error) => complaints.push(String(error)));
+  page.on('request', (request) => {
+    const { protocol, hostname } = new URL(request.url());
+    if (/^https?:$/.test(protocol) && hostname !== '127.0.0.1') complaints.push(`request to ${request.url()}`);
+  });
+  return { page, complaints };
+}
+
+/** What axe-core finds on the page as it stands: rule, help and the elements. */
+export async function findingsOfAxe(page: Page): Promise<string[]> {
+  await page.evaluate(axeSource);
+  const results = (await page.evaluate('axe.run(document, { resultTypes: ["violations"] })')) as AxeResults;
+  return results.violations.map((found) => `${found.id}: ${found.help} — ${found.nodes.map((node) => node.target.join(' ')).join(', ')}`);
+}
+
+/** How many pixels the page can be scrolled sideways. */
+export const sidewaysScroll = (page: Page): Promise<number> =>
+  page.evaluate(() => document.documentElement.scrollWidth - document.documentElement.clientWidth);
+
+function focusedIn(node: SerializedAXNode): SerializedAXNode | null {
+  for (const child of node.children ?? []) {
+    const found = focusedIn(child);
+    if (found) return found;
+  }
+  return node.focused && node.role !== 'RootWebArea' ? node : null;
+}
+
+export interface Focus {
+  role: string;
+  name: string;
+}
+
+/** The control that has the focus, as a screen reader tells it; null where none has it. */
+export async function focused(page: Page): Promise<Focus | null> {
+  const tree = await page.accessibility.snapshot({ interestingOnly: false });
+  const node = tree && focusedIn(tree);
+  return node ? { role: node.role, name: node.name ?? '' } : null;
+}
+
+export async function press(page: Page, ...keys: (KeyInput | `${'Control' | 'Alt' | 'Shift'}+${KeyInput}`)[]): Promise<void> {
+  for (const chord of keys) {
+    const parts = chord.length > 1 ? (chord.split('+') as KeyInput[]) : [chord as KeyInput];
+    for (const held of parts.slice(0, -1)) await page.keyboard.down(held);
+    await page.keyboard.press(parts.at(-1)!);
+    for (const held of parts.slice(0, -1).reverse()) await page.keyboard.up(held);
+  }
+}
+
+/** Moves on with Tab until the control of that name has the focus; fails with the names it passed. */
+export async function tabTo(page: Page, name: string | RegExp, { limit = 80 } = {}): Promise<Focus> {
+  const passed: string[] = [];
+  for (let count = 0; count < limit; count++) {
+    await page.keyboard.press('Tab');
+    const now = await focused(page);
+    if (now && (typeof name === 'string' ? now.name === name : name.test(now.name))) return now;
+    passed.push(now ? `${now.role} “${now.name}”` : 'nothing');
+  }
+  throw new Error(`Tab never came to ${String(name)}. It passed: ${passed.join(', ')}`);
+}
+
+/** Waits until a text stands on the page. */
+export const seeText = (page: Page, text: string, timeout = 15_000) =>
+  page.waitForFunction((wanted) => document.body.innerText.includes(wanted), { timeout }, text);
