@@ -1,0 +1,71 @@
+import type { Part, Pass, ProductionFile, SessionEvent } from '../contracts/resources';
+import { effectivePasses } from '../planner/derive';
+import { edit, type Edit } from './edits';
+import type { PassId } from './flavours';
+import { partName, partsOf } from './sheets/names';
+
+/** How a pass is called on the page and on paper: `S01` and `Weir Song`, or `S01` and `horns`. */
+export interface PassName {
+  /** The song's code, or its id where it has none; null for work that belongs to no song. */
+  code: string | null;
+  /** The song's title where its live parts are played together, else the parts that are added. */
+  label: string;
+  /** For a reader who does not see the code: `Weir Song, horns`. */
+  full: string;
+}
+
+/** An id as words: `lead-vocal` → `lead vocal`. */
+const asWords = (id: string): string => id.replaceAll('-', ' ');
+
+export const eventName = (event: SessionEvent): string => event.name ?? event.kind ?? asWords(event.id);
+
+const isLive = (part: Part): boolean => part.mode === 'live' || part.mode === 'guide';
+
+/** The name of a pass: its own, else the song's title for the parts that are played together, else the added parts. */
+export function passName(file: Pick<ProductionFile, 'songs'>, pass: Pass): PassName {
+  const song = pass.song === undefined ? undefined : file.songs.find(({ id }) => id === pass.song);
+  const code = song ? (song.code ?? song.id) : null;
+  const title = song ? (song.title ?? song.code ?? asWords(song.id)) : null;
+  const parts = partsOf(pass, song);
+  const added = parts.length > 0 && !parts.some(isLive) ? parts.map(partName).join(', ') : null;
+  const label = pass.name ?? added ?? title ?? asWords(pass.id);
+  return { code, label, full: title === null || label === title ? label : `${title}, ${label}` };
+}
+
+/** Code and label in one line, for sentences. */
+export function passInWords(file: Pick<ProductionFile, 'songs'>, pass: Pass): string {
+  const { code, label } = passName(file, pass);
+  return code === null ? label : `${code} ${label}`;
+}
+
+/**
+ * What to write before one pass can be pinned or left out while all of them are derived: every pass, so that none is lost.
+ * Nothing where passes are written already.
+ */
+export function editsToWritePasses(file: ProductionFile): Edit[] {
+  if (file.passes) return [];
+  return effectivePasses(file).map(({ id, ...fields }) => edit.create('passes', id, fields));
+}
+
+/** Edits that set fields of one pass (null clears one), writing all passes first where they are derived. */
+export function editsToSetPass(file: ProductionFile, id: PassId, fields: Edit['fields']): Edit[] {
+  return [...editsToWritePasses(file), edit.update('passes', id, fields)];
+}
+
+/**
+ * Passes that the songs would give by themselves and that no written pass stands for: what was added to the songs after passes had
+ * been written. Empty where passes are derived.
+ */
+export function passesMissing(file: ProductionFile): Pass[] {
+  if (!file.passes) return [];
+  const known = new Set(file.passes.map(({ id }) => id));
+  const covered = new Set(file.passes.flatMap((pass) => (pass.parts ?? []).map((part) => `${pass.song}/${part}`)));
+  return effectivePasses({ ...file, passes: undefined }).filter(
+    (pass) => !known.has(pass.id) && (pass.parts ?? []).some((part) => !covered.has(`${pass.song}/${part}`)),
+  );
+}
+
+/** Edits that add the missing passes. */
+export function editsToAddPasses(passes: Pass[]): Edit[] {
+  return passes.map(({ id, ...fields }) => edit.create('passes', id, fields));
+}
