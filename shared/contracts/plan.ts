@@ -13,8 +13,8 @@ export const planItem = z.object({
   kind: z.enum(itemKinds),
   /** The pass or event; other kinds have none. */
   id: z.string().optional(),
-  room: z.string().optional() as z.ZodType<RoomId | undefined, string | undefined>,
-  setup: z.string().optional() as z.ZodType<SetupId | undefined, string | undefined>,
+  room: (z.string() as z.ZodType<RoomId, string>).optional(),
+  setup: (z.string() as z.ZodType<SetupId, string>).optional(),
   start: wall,
   end: wall,
   people: z.array(z.string() as z.ZodType<PersonId, string>),
