@@ -20,7 +20,7 @@ export default defineConfig(
   vue.configs['flat/recommended'],
   { files: ['**/*.vue'], languageOptions: { parserOptions: { parser: tseslint.parser } } },
   { files: ['src/**', 'templates/**'], ignores: ['src/sw.js'], languageOptions: { globals: globals.browser } },
-  { files: ['src/sw.js'], languageOptions: { globals: { ...globals.serviceworker, __FILES__: 'readonly' } } },
+  { files: ['src/sw.js'], languageOptions: { globals: { ...globals.serviceworker, __FILES__: 'readonly', __VERSION__: 'readonly' } } },
   { files: ['server/**', 'tests/**', '*.js', '*.ts'], languageOptions: { globals: globals.node } },
   {
     files: ['**/*.ts', '**/*.vue'],
