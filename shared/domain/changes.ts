@@ -76,8 +76,9 @@ export function changesOf(file: ProductionFile, newId: () => string): Change[] {
 const typed = <Item>(row: Pick<Row, 'fields'>) => row.fields as unknown as Item;
 
 /**
- * The file that the rows make up: removed rows and the parts of removed songs left out, lists in the order of their positions,
- * `passes` absent where they are derived from the parts. Throws an Error where the head row is missing.
+ * The file that the rows make up: removed rows and the parts of removed songs left out, lists in the order of their positions.
+ * `passes` is absent (derived from the parts) unless a pass is there or the head says that they are written by hand, so that an
+ * empty list of the file stays one. Throws an Error where the head row is missing.
  */
 export function fileOf(rows: readonly Row[]): ProductionFile {
   const live = rows.filter((row) => !row.removed);
@@ -96,6 +97,7 @@ export function fileOf(rows: readonly Row[]): ProductionFile {
     const parts = partsOf.get(song.id);
     return parts ? { ...song, parts } : song;
   });
+  const passes = list<Pass>('passes');
   return {
     production: typed<Production>({ fields: production }),
     rooms: list<Room>('rooms'),
@@ -104,18 +106,7 @@ export function fileOf(rows: readonly Row[]): ProductionFile {
     setups: list<Setup>('setups'),
     changeovers: list<Changeover>('changeovers'),
     songs,
-    ...(passesByHand === true ? { passes: list<Pass>('passes') } : {}),
+    ...(passesByHand === true || passes.length > 0 ? { passes } : {}),
     events: list<SessionEvent>('events'),
   };
-}
-
-/**
- * The changes that write derived passes out, so that one of them can be edited, pinned or left out: without them, a first written
- * pass would replace all derived ones. `passes` are the effective passes; none are needed where they are written by hand already.
- */
-export function writePassesOut(passes: readonly Pass[], newId: () => string): Change[] {
-  return [
-    { id: newId(), resource: 'production', key: HEAD, op: 'update', fields: { passesByHand: true } },
-    ...passes.map((pass): Change => ({ id: newId(), resource: 'passes', key: pass.id, op: 'create', fields: given(pass) })),
-  ];
 }
