@@ -1,12 +1,21 @@
 import type { Fault } from '../../shared/contracts/api';
 import type { Change, Row } from '../../shared/contracts/changes';
-import { identityOf, rowSchemas } from '../../shared/domain/assemble';
+import { rowSchemas } from '../../shared/contracts/rows';
+import { idOfKey } from '../../shared/domain/changes';
 import type { Edit } from '../../shared/domain/edits';
 
 /** The client's own idea of what a change does, until the server's answer takes its place. */
 
 export const rowKey = (resource: string, key: string): string => `${resource} ${key}`;
 export type Rows = ReadonlyMap<string, Row>;
+
+/** What a row's key says about its fields; edits need not say it again. */
+function identityOf({ resource, key }: Pick<Edit, 'resource' | 'key'>): Record<string, string> {
+  if (resource === 'production') return {};
+  if (resource !== 'changeovers') return { id: idOfKey(resource, key) };
+  const [from = '', to = ''] = key.split('>');
+  return { from, to };
+}
 
 const withFields = (before: Record<string, unknown>, fields: Record<string, unknown>): Record<string, unknown> =>
   Object.fromEntries(Object.entries({ ...before, ...fields }).filter(([, value]) => value !== null && value !== undefined));
@@ -16,7 +25,14 @@ function rowAfter(rows: Rows, edit: Edit, revision: number): Row | undefined {
   const before = rows.get(rowKey(edit.resource, edit.key));
   if (edit.op === 'create') {
     const position = before?.position ?? lastPosition(rows, edit) + 1;
-    return { resource: edit.resource, key: edit.key, revision, position, removed: false, fields: withFields({}, edit.fields) };
+    return {
+      resource: edit.resource,
+      key: edit.key,
+      revision,
+      position,
+      removed: false,
+      fields: withFields(identityOf(edit), edit.fields),
+    };
   }
   if (!before) return undefined;
   if (edit.op === 'update') return { ...before, revision, fields: withFields(before.fields, edit.fields) };
@@ -45,7 +61,7 @@ export function revived(rows: Rows, edits: Edit[]): Edit[] {
     const before = rows.get(rowKey(edit.resource, edit.key));
     if (edit.op !== 'create' || !before?.removed) return [edit];
     const cleared = Object.fromEntries(Object.keys(before.fields).map((field) => [field, null]));
-    const identity = identityOf(edit.resource, edit.key);
+    const identity = identityOf(edit);
     const fields = Object.fromEntries(Object.entries({ ...cleared, ...edit.fields }).filter(([field]) => !(field in identity)));
     return [
       { ...edit, op: 'restore', fields: {} },
@@ -60,12 +76,15 @@ export function faultsAfter(rows: Rows, edits: Edit[]): Fault[] {
   return edits.flatMap((edit): Fault[] => {
     const row = after.get(rowKey(edit.resource, edit.key));
     if (!row || row.removed) return [];
-    const parsed = rowSchemas[edit.resource].safeParse({ ...identityOf(edit.resource, edit.key), ...row.fields });
+    const parsed = rowSchemas[edit.resource].safeParse(row.fields);
     if (parsed.success) return [];
     return parsed.error.issues.map((issue) => ({ path: [edit.resource, edit.key, ...issue.path].join('.'), expected: issue.message }));
   });
 }
 
 export function toChanges(edits: Edit[], newId: () => string): Change[] {
-  return edits.map(({ resource, key, op, fields }) => ({ id: newId(), resource, key, op, fields }));
+  return edits.map((edit) => {
+    const { resource, key, op } = edit;
+    return { id: newId(), resource, key, op, fields: op === 'create' ? { ...identityOf(edit), ...edit.fields } : edit.fields };
+  });
 }

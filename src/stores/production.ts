@@ -3,7 +3,8 @@ import { computed, ref, shallowRef } from 'vue';
 import type { Fault } from '../../shared/contracts/api';
 import type { ChangesResponse, Row } from '../../shared/contracts/changes';
 import type { Role } from '../../shared/contracts/roles';
-import { createAssembler } from '../../shared/domain/assemble';
+import type { ProductionFile } from '../../shared/contracts/resources';
+import { fileOf } from '../../shared/domain/changes';
 import type { Edit } from '../../shared/domain/edits';
 import { postChanges } from '../api/changes';
 import { readProduction } from '../api/productions';
@@ -18,6 +19,17 @@ export interface RefusedEdits {
   faults: Fault[];
   edits: Edit[];
 }
+/** What stands before a production is opened. */
+const NOTHING: ProductionFile = {
+  production: { code: '', title: '', timezone: 'UTC' },
+  rooms: [],
+  people: [],
+  gear: [],
+  setups: [],
+  changeovers: [],
+  songs: [],
+  events: [],
+};
 export type Saving = 'saved' | 'saving' | 'offline' | 'signed-out' | 'refused';
 
 function wordsFor(saving: Saving, unsaved: number, refused: number): string {
@@ -52,8 +64,7 @@ export const useProduction = defineStore('production', () => {
   const rows = computed<Rows>(() =>
     outbox.waiting.value.reduce<Rows>((made, batch) => rowsAfter(made, batch, revision.value), stored.value),
   );
-  const assemble = createAssembler();
-  const file = computed(() => assemble(rows.value.values()));
+  const file = computed(() => (rows.value.size > 0 ? fileOf([...rows.value.values()]) : NOTHING));
 
   const saving = computed<Saving>(() => {
     if (outbox.unsaved.value > 0) return outbox.trouble.value === 'none' ? 'saving' : outbox.trouble.value;
