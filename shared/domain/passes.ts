@@ -1,5 +1,6 @@
 import type { Part, Pass, ProductionFile, SessionEvent } from '../contracts/resources';
 import { effectivePasses } from '../planner/derive';
+import { HEAD } from './changes';
 import { edit, type Edit } from './edits';
 import type { PassId } from './flavours';
 import { partName, partsOf } from './sheets/names';
@@ -44,28 +45,11 @@ export function passInWords(file: Pick<ProductionFile, 'songs'>, pass: Pass): st
  */
 export function editsToWritePasses(file: ProductionFile): Edit[] {
   if (file.passes) return [];
-  return effectivePasses(file).map(({ id, ...fields }) => edit.create('passes', id, fields));
+  const head = edit.update('production', HEAD, { passesByHand: true });
+  return [head, ...effectivePasses(file).map((pass) => edit.create('passes', pass.id, { ...pass }))];
 }
 
 /** Edits that set fields of one pass (null clears one), writing all passes first where they are derived. */
 export function editsToSetPass(file: ProductionFile, id: PassId, fields: Edit['fields']): Edit[] {
   return [...editsToWritePasses(file), edit.update('passes', id, fields)];
-}
-
-/**
- * Passes that the songs would give by themselves and that no written pass stands for: what was added to the songs after passes had
- * been written. Empty where passes are derived.
- */
-export function passesMissing(file: ProductionFile): Pass[] {
-  if (!file.passes) return [];
-  const known = new Set(file.passes.map(({ id }) => id));
-  const covered = new Set(file.passes.flatMap((pass) => (pass.parts ?? []).map((part) => `${pass.song}/${part}`)));
-  return effectivePasses({ ...file, passes: undefined }).filter(
-    (pass) => !known.has(pass.id) && (pass.parts ?? []).some((part) => !covered.has(`${pass.song}/${part}`)),
-  );
-}
-
-/** Edits that add the missing passes. */
-export function editsToAddPasses(passes: Pass[]): Edit[] {
-  return passes.map(({ id, ...fields }) => edit.create('passes', id, fields));
 }
