@@ -1,0 +1,205 @@
+import type { ItemKind, MadePlan, PlanItem } from '../../contracts/plan';
+import type { ProductionFile } from '../../contracts/resources';
+import type { ZoneClock } from '../../time/wall';
+import { zoneClock } from '../../time/wall';
+import { clock, dateOfWall } from '../../time/words';
+import { DEFAULT_RULES } from '../defaults';
+import type { Minutes, PersonId, RoomId, WallDate, WallTime } from '../flavours';
+import { marksOf, midnightMark, type TimedMark } from './marks';
+import { type Names, namesOf, partsInWords, partsOf, songWords } from './names';
+import { runPages } from './run-pages';
+import { dayCount, type RoomDay, usedDates, usedRoomDays } from './room-days';
+import {
+  fullDate,
+  type Meanwhile,
+  type Paper,
+  type RunLine,
+  type RunRoom,
+  type RunRow,
+  type RunSheet,
+  type SheetEdition,
+  sheetHead,
+} from './sheet';
+
+export interface RunSheetRequest {
+  date: WallDate;
+  /** One room; absent = every room of the day. */
+  room?: RoomId;
+  edition: SheetEdition;
+  paper?: Paper;
+}
+
+/**
+ * The run sheet of one date: the clock, what is played, by whom, in which set-up, the reserve, the stops that do not move, and room to
+ * write what really happened.
+ * @returns `null` when the plan uses no room (or not that room) on that date.
+ */
+export function runSheet(file: ProductionFile, plan: MadePlan, request: RunSheetRequest): RunSheet | null {
+  const all = usedRoomDays(file, plan.items);
+  const sameDate = all.filter((day) => day.date === request.date);
+  const wanted = sameDate.filter((day) => request.room === undefined || day.room.id === request.room);
+  if (wanted.length === 0) return null;
+  const names = namesOf(file);
+  const zone = zoneClock(file.production.timezone);
+  const head = sheetHead(file, request.edition, request.paper);
+  return {
+    head,
+    date: request.date,
+    day: fullDate(request.date),
+    count: dayCount(request.date, usedDates(file, plan.items)),
+    rooms: wanted.map((day): RunRoom => {
+      const rows = day.items.map((item) => ({ item, row: rowOf(item, day, all, names, zone) }));
+      const lines = weave(rows, marksOf(day, sameDate, file, plan, names));
+      return {
+        room: day.room.name ?? day.room.id,
+        facts: roomFacts(day, names),
+        ends: endsOf(day, plan, file, zone),
+        pages: runPages(lines, meanwhileOf(day, sameDate, names), cautionsOf(day), head.paper),
+      };
+    }),
+  };
+}
+
+/** The dates that have a run sheet. */
+export function runSheetDates(file: ProductionFile, plan: MadePlan): WallDate[] {
+  return usedDates(file, plan.items);
+}
+
+function lengthOf(item: PlanItem, zone: ZoneClock): Minutes {
+  const [from, to] = [zone.minuteOf(item.start), zone.minuteOf(item.end)];
+  return from === 'gap' || to === 'gap' ? 0 : to - from;
+}
+
+const PLAIN_TITLES: Record<Exclude<ItemKind, 'pass' | 'event'>, string> = {
+  rig: 'Rig',
+  changeover: 'Change',
+  meal: 'Meal',
+  break: 'Break',
+  listen: 'Listen',
+  reserve: 'Reserve',
+  wrap: 'Wrap',
+};
+
+function rowOf(item: PlanItem, day: RoomDay, all: readonly RoomDay[], names: Names, zone: ZoneClock): RunRow {
+  const operators = new Set(day.room.operators ?? []);
+  const row: RunRow = {
+    is: 'row',
+    kind: item.kind,
+    from: clock(item.start),
+    to: clock(item.end),
+    minutes: lengthOf(item, zone),
+    code: '',
+    title: '',
+    task: '',
+    people: whoIn(item, names)
+      .filter((person) => !operators.has(person))
+      .map((person) => names.short(person)),
+    setup: names.setup(item.setup),
+    note: '',
+  };
+  if (item.kind === 'pass') return { ...row, ...passWords(item, names) };
+  if (item.kind === 'event') return { ...row, title: names.event(item.id) };
+  return { ...row, title: PLAIN_TITLES[item.kind], setup: '', task: plainTask(item, day, all, names) };
+}
+
+/** A rig is played by nobody, but those who get ready in it are there. */
+function whoIn(item: PlanItem, names: Names): PersonId[] {
+  return item.kind === 'rig' && item.people.length === 0 ? names.readyFor(item.setup) : item.people;
+}
+
+function passWords(item: PlanItem, names: Names): Pick<RunRow, 'code' | 'title' | 'task' | 'setup' | 'note'> {
+  const pass = names.pass(item.id);
+  const song = names.song(pass?.song);
+  const words = song ? songWords(song) : { code: '', title: pass?.name ?? item.id ?? '' };
+  const parts = pass ? partsInWords(partsOf(pass, song)) : '';
+  const own = song ? (pass?.name ?? '') : '';
+  return {
+    ...words,
+    task: [own, parts].filter((text) => text !== '').join(' · '),
+    setup: names.setup(item.setup ?? pass?.setup),
+    note: pass?.note ?? '',
+  };
+}
+
+/** What is done in an item that is no pass: which set-up is built, out of which. */
+function plainTask(item: PlanItem, day: RoomDay, all: readonly RoomDay[], names: Names): string {
+  if (item.kind === 'rig') return names.setup(item.setup);
+  if (item.kind === 'wrap') return 'names, copies, notes';
+  if (item.kind === 'listen') return 'to what was captured before';
+  if (item.kind !== 'changeover') return '';
+  const before = all
+    .filter((other) => other.room.id === day.room.id && other.open.from <= day.open.from)
+    .flatMap((other) => other.items)
+    .filter((other) => other.setup !== undefined && other.start < item.start)
+    .at(-1);
+  return before?.setup === undefined || before.setup === item.setup
+    ? `to ${names.setup(item.setup)}`
+    : `${names.setup(before.setup)} → ${names.setup(item.setup)}`;
+}
+
+function roomFacts(day: RoomDay, names: Names): string[] {
+  const loud = (day.room.loud ?? []).filter((window) => window.to > day.open.from && window.from < day.open.to);
+  const desk = (day.room.operators ?? []).map((person) => names.short(person));
+  return [
+    `open ${clock(day.open.from)}–${clock(day.open.to)}`,
+    ...loud.map((window) =>
+      window.from <= day.open.from ? `loud until ${clock(window.to)}` : `loud ${clock(window.from)}–${clock(window.to)}`,
+    ),
+    ...(desk.length > 0 ? [`at the desk: ${desk.join(', ')}`] : []),
+  ];
+}
+
+/** The end of the day by the odds, on the grid of the plan's step: never finer than what was planned. */
+function endsOf(day: RoomDay, plan: MadePlan, file: ProductionFile, zone: ZoneClock): RunRoom['ends'] {
+  const odds = plan.odds.days.find((one) => one.room === day.room.id && one.date === day.date);
+  if (!odds) return null;
+  const step = file.production.rules?.step ?? DEFAULT_RULES.step;
+  const onGrid = (wall: WallTime) => {
+    const minute = zone.minuteOf(wall);
+    const past = Number(wall.slice(11, 13)) * 60 + Number(wall.slice(14, 16));
+    return minute === 'gap' ? clock(wall) : clock(zone.wallOf(minute + ((step - (past % step)) % step)));
+  };
+  return { half: onGrid(odds.p50), nineInTen: onGrid(odds.p90) };
+}
+
+function meanwhileOf(day: RoomDay, sameDate: readonly RoomDay[], names: Names): Meanwhile[] {
+  const elsewhere = sameDate.filter((other) => other.room.id !== day.room.id);
+  return elsewhere.flatMap((other) =>
+    other.items
+      .filter((item) => item.kind === 'pass' && item.start < day.open.to && item.end > day.open.from)
+      .map((item) => {
+        const { code, title, task } = passWords(item, names);
+        const people = item.people.filter((person) => !(other.room.operators ?? []).includes(person)).map((person) => names.short(person));
+        const what = [code, task === '' ? title : task].filter((text) => text !== '').join(' ');
+        return {
+          room: other.room.name ?? other.room.id,
+          from: clock(item.start),
+          to: clock(item.end),
+          says: people.length > 0 ? `${what} (${people.join(', ')})` : what,
+        };
+      }),
+  );
+}
+
+/** The usual cautions where a day holds what can hurt; common practice, local rules and licensed people come first. */
+function cautionsOf(day: RoomDay): string[] {
+  const kinds = new Set(day.items.map((item) => item.kind));
+  return kinds.has('rig') || kinds.has('changeover')
+    ? ['While rigging: two to lift, walkways and exits stay clear, mute before patching, never lift a safety earth.']
+    : [];
+}
+
+/** Puts the marks between the rows by the clock: a mark at the start of a row stands before it. */
+function weave(rows: readonly { item: PlanItem; row: RunRow }[], marks: readonly TimedMark[]): RunLine[] {
+  const lines: RunLine[] = [];
+  let next = 0;
+  let date: WallDate | undefined;
+  for (const { item, row } of rows) {
+    for (let mark = marks[next]; mark !== undefined && mark.time <= item.start; mark = marks[++next]) lines.push(mark.mark);
+    const starts = dateOfWall(item.start);
+    if (date !== undefined && starts !== date) lines.push(midnightMark(fullDate(starts)));
+    date = starts;
+    lines.push(row);
+  }
+  return [...lines, ...marks.slice(next).map((mark) => mark.mark)];
+}
