@@ -50,7 +50,8 @@ export function daysFromEpoch(year: number, month: number, day: number): number 
   return 365 * y + Math.floor(y / 4) - Math.floor(y / 100) + Math.floor(y / 400) + dayOfYear - 719_468;
 }
 
-function writeDate(days: number): WallDate {
+/** The date so many days after 1970-01-01. */
+export function writeDate(days: number): WallDate {
   const shifted = days + 719_468;
   const era = Math.floor(shifted / 146_097);
   const dayOfEra = shifted - era * 146_097;
