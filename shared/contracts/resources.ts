@@ -2,6 +2,7 @@ import { z } from 'zod';
 import type { EventId, GearId, PartId, PassId, PersonId, RoomId, SetupId, SongId } from '../domain/flavours';
 import {
   amount,
+  between,
   flag,
   hours,
   idOf,
@@ -34,7 +35,10 @@ const partId = idOf<'part'>();
 const passId = idOf<'pass'>();
 const eventId = idOf<'event'>();
 
-/** A field of the file that this version does not know, kept for export; `path` is relative to its resource. */
+/**
+ * A field of the file that this version does not know, kept for export; `path` is relative to its resource. The production's paths
+ * begin at the root of the file, because its rules and weights stand beside it: `[production, place, floor]`, `[rules, tea]`.
+ */
 export const extraField = z.object({ path: z.array(z.union([z.string(), z.number()])), value: z.unknown() });
 export type ExtraField = z.infer<typeof extraField>;
 const extra = z.array(extraField).optional();
@@ -222,8 +226,8 @@ export const part = z.object({
   after: list(dependency).optional(),
   /** Focus rank in the mix (1 = first), pan −1 left … 1 right, width 0 … 1. */
   focus: whole(1).optional(),
-  pan: z.number({ error: 'a number from -1 (left) to 1 (right)' }).min(-1).max(1).optional(),
-  width: z.number({ error: 'a number from 0 to 1' }).min(0).max(1).optional(),
+  pan: between(-1, 1, 'a number from -1 (left) to 1 (right)').optional(),
+  width: between(0, 1, 'a number from 0 to 1').optional(),
   note: text().optional(),
   extra,
 });

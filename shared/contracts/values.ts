@@ -41,13 +41,18 @@ export const wallTime = z
     { error: 'a date that exists' },
   ) as unknown as z.ZodType<WallTime, string>;
 
+/** Control characters other than tab and line breaks, halves of a surrogate pair, and two code points that are no characters. */
+const UNPRINTABLE = /[^\P{Cc}\t\n\r]|\p{Cs}|[\uFFFE\uFFFF]/u;
+export const NO_CONTROL_CHARACTERS = 'text without control characters';
+/** Position of the first such character, or -1. */
+export const unprintableAt = (value: string): number => value.search(UNPRINTABLE);
+
 /** One line or more of text without control characters other than line breaks and tabs. */
 export const text = (max = 2000) =>
   z
-    .string({ error: 'text' })
+    .string({ error: ({ input }) => (input === undefined ? 'text' : 'text; put numbers and true or false in quotes') })
     .max(max, { error: `text of at most ${max} characters` })
-    // eslint-disable-next-line no-control-regex
-    .refine((value) => !/[\u0000-\u0008\u000b\u000c\u000e-\u001f\u007f]/.test(value), { error: 'text without control characters' });
+    .refine((value) => unprintableAt(value) < 0, { error: NO_CONTROL_CHARACTERS });
 
 export const title = text(200).refine((value) => value.trim() !== '', { error: 'text that is not empty' });
 
@@ -70,6 +75,8 @@ export const positive = z
   .number({ error: 'a number above 0' })
   .positive({ error: 'a number above 0' })
   .max(LARGEST, { error: 'a number of at most 1000000000' });
+
+export const between = (least: number, most: number, error: string) => z.number({ error }).min(least, { error }).max(most, { error });
 
 const EXPECTED_MINUTES = 'whole minutes above 0, or [low, likely, high] with low ≤ likely ≤ high';
 const oneMinutes = z.int({ error: EXPECTED_MINUTES }).min(1, { error: EXPECTED_MINUTES }).max(100_000, { error: 'at most 100000 minutes' });
