@@ -16,7 +16,7 @@ function serviceWorker(): Plugin {
     configResolved(config) {
       out = path.resolve(config.root, config.build.outDir);
     },
-    closeBundle() {
+    writeBundle() {
       const names = fs.readdirSync(out, { recursive: true, encoding: 'utf8' });
       const files = names.filter((name) => KEPT_ON_THE_DEVICE.test(name) && name !== 'sw.js').sort();
       const version = createHash('sha256');

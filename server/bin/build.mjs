@@ -41,7 +41,12 @@ export const buildServer = ({ outDir = 'build', watch = false } = {}) =>
 if (process.argv[1] === fileURLToPath(import.meta.url)) {
   const print = fingerprint();
   unmark();
-  await build({ logLevel: 'warn' });
-  await buildServer();
-  mark(print);
+  try {
+    await build({ logLevel: 'warn' });
+    await buildServer();
+    mark(print);
+  } catch (error) {
+    console.error(error.message); // names file and line; where in Vite it was noticed helps nobody
+    process.exitCode = 1;
+  }
 }

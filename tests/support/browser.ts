@@ -1,7 +1,7 @@
 import fs from 'node:fs';
 import { createRequire } from 'node:module';
 import type { AxeResults } from 'axe-core';
-import puppeteer, { type Browser, type KeyInput, type Page, type SerializedAXNode } from 'puppeteer-core';
+import puppeteer, { type Browser, type ElementHandle, type KeyInput, type Page, type SerializedAXNode } from 'puppeteer-core';
 
 const axeSource = fs.readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
 
@@ -88,6 +88,43 @@ export async function press(page: Page, ...keys: (KeyInput | `${'Control' | 'Alt
     await page.keyboard.press(parts.at(-1)!);
     for (const held of parts.slice(0, -1).reverse()) await page.keyboard.up(held);
   }
+}
+
+interface TabStop extends Focus {
+  /** The element as a person who mends it would look for it. */
+  element: string;
+  /** Whether the focus changes what is painted at the element or right around it. */
+  visible: boolean;
+}
+
+/** What is painted where an element stands, with a margin for its focus ring. */
+async function paintedAt(page: Page, element: ElementHandle): Promise<string> {
+  const box = await element.boundingBox();
+  if (!box || box.width === 0 || box.height === 0) return '';
+  const clip = { x: Math.max(0, box.x - 6), y: Math.max(0, box.y - 6), width: box.width + 12, height: box.height + 12 };
+  return page.screenshot({ clip, encoding: 'base64', captureBeyondViewport: true });
+}
+
+/** Goes once through the page with Tab and looks at every control on the way. */
+export async function walkByTab(page: Page, { limit = 150 } = {}): Promise<TabStop[]> {
+  const stops: TabStop[] = [];
+  await page.evaluate(() => document.body.querySelectorAll('[data-walked]').forEach((element) => element.removeAttribute('data-walked')));
+  while (stops.length < limit) {
+    await page.keyboard.press('Tab');
+    const active = (await page.evaluateHandle(() => document.activeElement)).asElement() as ElementHandle<Element> | null;
+    const again = await active?.evaluate((element) => element === document.body || element.hasAttribute('data-walked'));
+    if (!active || again !== false) break;
+    const now = await focused(page);
+    const withFocus = await paintedAt(page, active);
+    const element = await active.evaluate((node) => {
+      node.setAttribute('data-walked', '');
+      if (node instanceof HTMLElement || node instanceof SVGElement) node.blur();
+      return node.outerHTML.slice(0, 120);
+    });
+    const without = await paintedAt(page, active);
+    stops.push({ role: now?.role ?? '', name: now?.name ?? '', element, visible: withFocus !== '' && withFocus !== without });
+  }
+  return stops;
 }
 
 /** Moves on with Tab until the control of that name has the focus; fails with the names it passed. */

@@ -1,0 +1,35 @@
+import type { Draft, Snapshot } from '../../shared/contracts/api';
+import type { ProductionFile } from '../../shared/contracts/resources';
+import type { MadePlan } from '../../shared/contracts/plan';
+import { readProductionFile } from '../../shared/file/read';
+import { planProduction } from '../../shared/planner/plan';
+import { Client } from './client';
+
+export interface PublishedDemo {
+  client: Client;
+  id: string;
+  file: ProductionFile;
+  plan: MadePlan;
+}
+
+/** The production as its export gives it. */
+export async function exported(client: Client, id: string): Promise<ProductionFile> {
+  const answer = await client.send('GET', `/api/productions/${id}/file.yaml`);
+  const read = readProductionFile(await answer.text());
+  if (!read.ok) throw new Error(`The export has faults: ${JSON.stringify(read.faults)}`);
+  return read.file;
+}
+
+/** Opens a trial with a starting point, plans it with a fixed seed and publishes the plan, all through the API. */
+export async function publishDemo(address: string, startingPoint = 'demo'): Promise<PublishedDemo> {
+  const client = new Client(address);
+  const id = await client.openTrial(startingPoint);
+  const { revision } = await client.json<Snapshot>('GET', `/api/productions/${id}`);
+  const file = await exported(client, id);
+  const work = { seed: 1, iterations: 100 };
+  const outcome = planProduction(file, { ...work, stop: () => false });
+  if (outcome.status === 'impossible' || outcome.status === 'unsolved') throw new Error(`${startingPoint} has no plan: ${outcome.status}`);
+  const plan = await client.json<Draft>('POST', `/api/productions/${id}/plans`, { inputRevision: revision, ...work, outcome });
+  await client.json('POST', `/api/productions/${id}/versions`, { plan: plan.id });
+  return { client, id, file, plan: outcome };
+}
