@@ -65,7 +65,7 @@ function ownItems(reading: Reading, person: PersonId): Own[] {
 function playsIn(reading: Reading, person: PersonId, rig: Item): boolean {
   return [...reading.placed].some(([id, item]) => {
     const pass = reading.passes.get(id);
-    return pass !== undefined && item.from >= rig.to && pass.setup === rig.setup && (pass.people ?? []).includes(person);
+    return pass !== undefined && item.from >= rig.to && pass.setup === rig.setup && item.people.includes(person);
   });
 }
 

@@ -55,7 +55,7 @@ function checkBuilt(
 ): void {
   const { step } = reading.rules;
   const kind = standing ? 'changeover' : 'rig';
-  const entry = reading.file.changeovers.find((change) => change.from === standing?.setup && change.to === setup);
+  const entry = reading.file.changeovers.findLast((change) => change.from === standing?.setup && change.to === setup);
   const minutes = standing ? (entry?.minutes ?? reading.rules.changeover) : (reading.setups.get(setup)?.rig ?? 0);
   const need = likelyMinutes(minutes, step);
   const got = Math.max(0, ...between.filter((item) => item.kind === kind && item.setup === setup && item.roomDay).map(lengthOf));
