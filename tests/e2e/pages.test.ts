@@ -1,6 +1,6 @@
 import type { Browser, Page } from 'puppeteer-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import { findingsOfAxe, openBrowser, sidewaysScroll, visit, walkByTab, type Theme, type Visit } from '../support/browser';
+import { findingsOfAxe, openBrowser, sidewaysScroll, signIn, visit, walkByTab, type Theme, type Visit } from '../support/browser';
 import { freshDatabase } from '../support/database';
 import { publishDemo } from '../support/demo';
 import { startServer, type RunningServer } from '../support/server';
@@ -16,8 +16,7 @@ let visits: Record<Theme, Visit>;
 async function signedInVisit(theme: Theme, cookie: string): Promise<Visit> {
   const one = await visit(browser);
   await one.page.evaluateOnNewDocument((name) => localStorage.setItem('redpoll.theme', name), theme);
-  const [name, value] = [cookie.slice(0, cookie.indexOf('=')), cookie.slice(cookie.indexOf('=') + 1)];
-  await one.page.setCookie({ name, value, url: server.address, httpOnly: true, sameSite: 'Lax' });
+  await signIn(one.page, server.address, cookie);
   return one;
 }
 

@@ -50,6 +50,12 @@ export async function visit(browser: Browser, { width = 1280, height = 800 } = {
   return { page, complaints };
 }
 
+/** Lets a page go on with a session that was opened outside the browser (`name=value`). */
+export async function signIn(page: Page, address: string, cookie: string): Promise<void> {
+  const end = cookie.indexOf('=');
+  await page.setCookie({ name: cookie.slice(0, end), value: cookie.slice(end + 1), url: address, httpOnly: true, sameSite: 'Lax' });
+}
+
 /** What axe-core finds on the page as it stands: rule, help and the elements. */
 export async function findingsOfAxe(page: Page): Promise<string[]> {
   await page.evaluate(axeSource);

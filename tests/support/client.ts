@@ -1,3 +1,5 @@
+import type { StartingPoint } from '../../shared/contracts/api';
+
 /** A person's way to the API from outside the browser: keeps the session cookie, sends the Origin of the page. */
 export class Client {
   readonly #address: string;
@@ -35,9 +37,10 @@ export class Client {
     return (await answer.json()) as T;
   }
 
-  /** Opens a trial and in it a production from a starting point; gives the production's id. */
-  async openTrial(startingPoint: string): Promise<string> {
+  /** Opens a trial and in it a production from a starting point (the first one is the demo); gives the production's id. */
+  async openTrial(startingPoint?: string): Promise<string> {
     await this.json('POST', '/api/session/trial');
+    startingPoint ??= (await this.json<StartingPoint[]>('GET', '/api/starting-points'))[0]?.slug;
     const { id } = await this.json<{ id: string }>('POST', '/api/productions', { from: startingPoint });
     return id;
   }

@@ -63,14 +63,14 @@ const numberIn = (title: unknown) => Number(/^Round (\d+)$/.exec(String(title))?
  * Kills the server with -9 again and again while four people write, and looks each time whether what was called saved is there,
  * in the rows and once in the history, and whether an unanswered change that is sent again is applied exactly once.
  */
-export async function surviveKills(databaseUrl: string, startingPoint: string, rounds: number, seed: number): Promise<void> {
+export async function surviveKills(databaseUrl: string, rounds: number, seed: number): Promise<void> {
   const random = generator(seed);
   const secret = randomBytes(32).toString('hex');
   const port = await freePort();
   let server = await startServer({ databaseUrl, port, secret });
   try {
     const client = new Client(server.address);
-    const id = await client.openTrial(startingPoint);
+    const id = await client.openTrial();
     const read = () => client.json<Snapshot>('GET', `/api/productions/${id}`);
     const songs = (await read()).rows.filter((row) => row.resource === 'songs').slice(0, 4);
     const writers = songs.map((song) => new Writer(client, id, song.key));

@@ -34,9 +34,10 @@ export interface Started {
   says: (text: string) => Promise<void>;
 }
 
-/** Runs the start command as a person would, with settings of its own. */
-export function startCommand(env: Record<string, string>): Started {
-  const child = spawn(process.execPath, ['server/bin/start.mjs'], { env: { ...process.env, ...env }, stdio: ['ignore', 'pipe', 'pipe'] });
+/** Runs the start command of a checkout (this one) as a person would, with settings of its own. */
+export function startCommand(env: Record<string, string>, checkout = '.'): Started {
+  const command = path.join(checkout, 'server/bin/start.mjs');
+  const child = spawn(process.execPath, [command], { env: { ...process.env, ...env }, stdio: ['ignore', 'pipe', 'pipe'] });
   let said = '';
   for (const stream of [child.stdout, child.stderr]) stream.setEncoding('utf8').on('data', (text: string) => (said += text));
   const ended = new Promise<number | string>((resolve) => child.once('close', (code, signal) => resolve(code ?? signal ?? 'gone')));
