@@ -52,7 +52,7 @@ async function test() {
   say(`Set-up: ${((ready - began) / 1000).toFixed(1)} s\n`);
   const wanted = process.argv[2];
   if (wanted === '--bench' || wanted === '--pictures') {
-    const { code } = await run('node_modules/.bin/tsx', [`tests/${wanted.slice(2)}/run.ts`], { show: true });
+    const { code } = await run('node_modules/.bin/tsx', [`tests/${wanted.slice(2)}/run.ts`, ...process.argv.slice(3)], { show: true });
     return code;
   }
   const tally = wanted === '--soak' ? await vitest(['--config', 'tests/soak/vitest.config.ts']) : add(await check(), await vitest([]));

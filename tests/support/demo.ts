@@ -20,16 +20,21 @@ export async function exported(client: Client, id: string): Promise<ProductionFi
   return read.file;
 }
 
-/** Opens a trial with a starting point, plans it with a fixed seed and publishes the plan, all through the API. */
-export async function publishDemo(address: string, startingPoint?: string): Promise<PublishedDemo> {
+interface DemoOptions {
+  /** Work on the production before it is planned. */
+  before?: (client: Client, id: string) => Promise<void>;
+}
+
+/** Opens a trial with the demo, plans it with a fixed seed and publishes the plan, all through the API. */
+export async function publishDemo(address: string, { before }: DemoOptions = {}): Promise<PublishedDemo> {
   const client = new Client(address);
-  const id = await client.openTrial(startingPoint);
+  const id = await client.openTrial();
+  await before?.(client, id);
   const { revision } = await client.json<Snapshot>('GET', `/api/productions/${id}`);
   const file = await exported(client, id);
   const work = { seed: 1, iterations: 100 };
   const outcome = planProduction(file, { ...work, stop: () => false });
-  if (outcome.status === 'impossible' || outcome.status === 'unsolved')
-    throw new Error(`The starting point has no plan: ${outcome.status}`);
+  if (outcome.status === 'impossible' || outcome.status === 'unsolved') throw new Error(`The demo has no plan: ${outcome.status}`);
   const plan = await client.json<Draft>('POST', `/api/productions/${id}/plans`, { inputRevision: revision, ...work, outcome });
   await client.json('POST', `/api/productions/${id}/versions`, { plan: plan.id });
   return { client, id, file, plan: outcome };
