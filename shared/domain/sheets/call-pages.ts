@@ -2,18 +2,18 @@ import { fillPages, linesOf, PAGE_MM } from './pages';
 import type { CallDay, CallFact, CallLine, CallPage, Paper } from './sheet';
 
 /** Heights in millimetres, those of templates/print.css. */
-const HEADER = 46;
-const DAY_HEAD = 36;
-const LINE = 5.4;
-const COLUMNS = { what: 62, key: 32, tempo: 30 };
+const HEADER = 37;
+const DAY_HEAD = 35;
+const LINE = 5.3;
+const COLUMNS = { what: 80, key: 31, tempo: 30 };
 /** The most lines of one day on a page. */
 const MOST_LINES = 12;
 
 function heightOfLine(line: CallLine): number {
-  if (line.kind === 'pause') return 7;
-  const what = linesOf(`${line.code.repeat(2)} ${line.title}`, COLUMNS.what, 14) * 7.4;
+  if (line.kind === 'pause') return 7.8;
+  const what = 7.7 + (linesOf(`${line.code.repeat(2)} ${line.title}`, COLUMNS.what, 15) - 1) * 6;
   const below = [line.part, line.note].filter((text) => text !== '').reduce((sum, text) => sum + linesOf(text, COLUMNS.what) * LINE, 0);
-  return 3 + Math.max(9, what + below, linesOf(line.key, COLUMNS.key) * LINE, linesOf(line.tempo, COLUMNS.tempo) * LINE);
+  return 2.6 + Math.max(9, what + below, linesOf(line.key, COLUMNS.key) * LINE, linesOf(line.tempo, COLUMNS.tempo) * LINE);
 }
 
 function heightOfDay(day: CallDay): number {
@@ -29,13 +29,13 @@ function split(day: CallDay, room: number): CallDay[] {
   return fillPages(day.lines, heightOfLine, room - DAY_HEAD, MOST_LINES).map((lines, index) => ({ ...day, lines, continued: index > 0 }));
 }
 
-/** Puts the days on pages, a day never torn where it fits one page, and the facts below the last day or on a page of their own. */
+/** Puts the days on pages, a day never torn where it fits one page, and the facts on the first page that has room for them. */
 export function callPages(days: readonly CallDay[], facts: CallFact[], paper: Paper): CallPage[] {
   const room = PAGE_MM[paper].live - HEADER;
   const pieces = days.flatMap((day) => split(day, room));
-  const pages = fillPages(pieces, heightOfDay, room).map((page): CallPage => ({ days: page, facts: [] }));
-  const last = pages.at(-1)!;
-  const used = last.days.reduce((sum, day) => sum + heightOfDay(day), 0);
-  if (used + heightOfFacts(facts) <= room) return [...pages.slice(0, -1), { ...last, facts }];
-  return [...pages, { days: [], facts }];
+  const pages = fillPages(pieces, heightOfDay, room);
+  const left = pages.map((page) => room - page.reduce((sum, day) => sum + heightOfDay(day), 0));
+  const roomy = left.findIndex((millimetres) => millimetres >= heightOfFacts(facts));
+  const filled = pages.map((page, index): CallPage => ({ days: page, facts: index === roomy ? facts : [] }));
+  return roomy < 0 ? [...filled, { days: [], facts }] : filled;
 }

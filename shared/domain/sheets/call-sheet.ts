@@ -1,7 +1,7 @@
 import type { MadePlan, PlanCall, PlanItem } from '../../contracts/plan';
 import type { Person, ProductionFile, Song } from '../../contracts/resources';
 import { type ZoneClock, zoneClock } from '../../time/wall';
-import { clock, dayWords, length } from '../../time/words';
+import { clock, dateOfWall, dayWords, length } from '../../time/words';
 import type { PersonId, WallDate } from '../flavours';
 import { callPages } from './call-pages';
 import { isOwn } from './marks';
@@ -68,6 +68,7 @@ function callDay(
     arrive: clock(call.arrive),
     ready: clock(call.ready),
     release: { earliest: clock(range.earliest), likely: clock(range.likely), latest: clock(range.latest) },
+    overnight: dateOfWall(call.release) !== dateOfWall(call.ready),
     lines: dayLines(call, here, file, names, zone),
     continued: false,
   };

@@ -1,24 +1,28 @@
 import type { MadePlan, PlanCall, PlanItem } from '../../contracts/plan';
 import type { ProductionFile } from '../../contracts/resources';
-import { clock } from '../../time/words';
+import { clock, dateOfWall } from '../../time/words';
 import type { PersonId, WallTime } from '../flavours';
 import type { Names } from './names';
 import type { RoomDay } from './room-days';
-import type { FixedMark, PeopleMark } from './sheet';
+import { fullDate, type MidnightMark, type PeopleMark, type StopMark } from './sheet';
 
 /** A mark with its full time, before it is put between the rows. */
 export interface TimedMark {
   time: WallTime;
-  mark: PeopleMark | FixedMark;
+  mark: PeopleMark | StopMark | MidnightMark;
 }
 
-function stop(time: WallTime, says: string): TimedMark {
-  return { time, mark: { is: 'stop', at: clock(time), says } };
+function stop(time: WallTime, says: string, who: string[] = []): TimedMark {
+  return { time, mark: { is: 'stop', at: clock(time), who, says } };
 }
 
-/** The mark between two dates of a room-day that goes past midnight. */
-export function midnightMark(words: string): FixedMark {
-  return { is: 'midnight', at: '00:00', says: words };
+/** Where a room-day goes past midnight, a line says which date begins. */
+function midnights(day: RoomDay): TimedMark[] {
+  const dates = [...new Set(day.items.flatMap((item) => [dateOfWall(item.start), dateOfWall(item.end)]))].sort();
+  return dates
+    .slice(1)
+    .map((date) => ({ time: `${date}T00:00`, mark: { is: 'midnight', at: '00:00', says: fullDate(date) } }) satisfies TimedMark)
+    .filter((mark) => day.items.some((item) => item.end > mark.time));
 }
 
 /**
@@ -66,7 +70,7 @@ function hardStops(day: RoomDay, calls: readonly PlanCall[], file: ProductionFil
     },
     names,
   );
-  const leaving = [...windowEnds].map(([time, who]) => stop(time, `${who.join(', ')} ${who.length > 1 ? 'leave' : 'leaves'}`));
+  const leaving = [...windowEnds].map(([time, who]) => stop(time, who.length > 1 ? 'leave' : 'leaves', who));
   const quiet = (day.room.loud ?? []).filter((window) => within(window.to)).map((window) => stop(window.to, 'no loud work from here'));
   const passes = day.items.flatMap((item) => (item.kind === 'pass' ? (names.pass(item.id) ?? []) : []));
   const used = new Set(passes.flatMap((pass) => (pass.uses ?? []).map((use) => use.gear)));
@@ -100,5 +104,7 @@ export function marksOf(day: RoomDay, sameDate: readonly RoomDay[], file: Produc
     mark: { is: 'people', at: clock(time), arrive: arrivals.get(time) ?? [], release: releases.get(time) ?? [] },
   }));
   // At the same time the stop stands last, as the rule under everything that had to be over.
-  return [...people, ...hardStops(day, calls, file, names)].sort((a, b) => (a.time < b.time ? -1 : a.time > b.time ? 1 : 0));
+  return [...midnights(day), ...people, ...hardStops(day, calls, file, names)].sort((a, b) =>
+    a.time < b.time ? -1 : a.time > b.time ? 1 : 0,
+  );
 }

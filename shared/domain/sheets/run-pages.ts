@@ -3,34 +3,44 @@ import type { Meanwhile, Paper, RunLine, RunPage, RunRow } from './sheet';
 
 /** The most rows that can be read from a stand. */
 const MOST_ROWS = 14;
-/** Header of the page and labels of the columns, in millimetres; the set width of the columns is that of templates/print.css. */
-const HEADER = 50;
-const COLUMNS = { what: 68, people: 38, setup: 25, beside: 155 };
-const LINE = 5.4;
-const LOW = new Set<RunRow['kind']>(['meal', 'break', 'wrap', 'listen', 'reserve']);
+/** Millimetres of templates/print.css: header with the labels of the columns, lines of text, the clock of a row, widths of the columns. */
+const HEADER = 44;
+const BODY = 5.3;
+const TITLE = { first: 7.7, next: 6 };
+const CLOCK = 12.3;
+const PADDING = { row: 3.1, low: 2.1 };
+const COLUMNS = { what: 71, people: 33, setup: 21, beside: 155 };
+const LOW = new Set<RunRow['kind']>(['meal', 'break', 'wrap', 'listen', 'reserve', 'event']);
 
 export function heightOfRunLine(line: RunLine): number {
-  if (line.is === 'people') return 1.6 + LINE * linesOf([...line.arrive, ...line.release, 'arrive', 'can go'].join(', '), COLUMNS.beside);
-  if (line.is !== 'row') return 3.2 + LINE * linesOf(line.says, COLUMNS.beside, 14);
-  const title = linesOf(`${line.code.repeat(2)} ${line.title}`, COLUMNS.what, 15) * 7.2;
-  const below = [line.task, line.note].filter((text) => text !== '').reduce((sum, text) => sum + linesOf(text, COLUMNS.what) * LINE, 0);
-  const people = linesOf(line.people.join(', '), COLUMNS.people) * LINE;
-  const setup = linesOf(line.setup, COLUMNS.setup) * LINE;
-  return 3.4 + Math.max(LOW.has(line.kind) ? 10.5 : 14, title + below, people, setup);
+  if (line.is === 'people') return 2.2 + BODY * linesOf([...line.arrive, ...line.release, 'arrive', 'can go'].join(', '), COLUMNS.beside);
+  if (line.is !== 'row') return 3.4 + 6.2 * linesOf([...('who' in line ? line.who : []), line.says].join(', '), COLUMNS.beside, 14);
+  const title = TITLE.first + (linesOf(`${line.code.repeat(2)} ${line.title}`, COLUMNS.what, 15) - 1) * TITLE.next;
+  const below = [line.task, line.note].filter((text) => text !== '').reduce((sum, text) => sum + linesOf(text, COLUMNS.what) * BODY, 0);
+  const people = linesOf(line.people.join(', '), COLUMNS.people) * BODY;
+  const setup = linesOf(line.setup, COLUMNS.setup) * BODY;
+  return (LOW.has(line.kind) ? PADDING.low : PADDING.row) + Math.max(CLOCK, title + below, people, setup);
 }
 
-/** Splits a room-day into pages. What goes on elsewhere and the cautions stand on the last one, or on one of their own. */
-export function runPages(lines: readonly RunLine[], meanwhile: Meanwhile[], cautions: string[], paper: Paper): RunPage[] {
+/** A last page of marks without a row would be torn from what they belong to: it takes the last row along. */
+function withoutOrphans(pages: RunLine[][]): RunLine[][] {
+  const last = pages.at(-1)!;
+  const before = pages.at(-2);
+  if (!before || last.some((line) => line.is === 'row')) return pages;
+  const from = before.findLastIndex((line) => line.is === 'row');
+  return from <= 0 ? pages : [...pages.slice(0, -2), before.slice(0, from), [...before.slice(from), ...last]];
+}
+
+/** Splits a room-day into pages. What goes on elsewhere stands on the last one, or on one of its own. */
+export function runPages(lines: readonly RunLine[], meanwhile: Meanwhile[], paper: Paper): RunPage[] {
   const room = PAGE_MM[paper].live - HEADER;
   const pages = fillPages(lines, heightOfRunLine, room, MOST_ROWS, (line) => line.is === 'row').map((page): RunPage => ({
     lines: page,
     meanwhile: [],
-    cautions: [],
   }));
-  const foot =
-    (meanwhile.length > 0 ? 9 : 0) + meanwhile.reduce((sum, one) => sum + linesOf(one.says, 130) * LINE, 0) + cautions.length * 2 * LINE;
+  const foot = 9 + meanwhile.reduce((sum, one) => sum + linesOf(one.says, 130) * BODY, 0);
   const last = pages.at(-1)!;
   const used = last.lines.reduce((sum, line) => sum + heightOfRunLine(line), 0);
-  if (used + foot <= room) return [...pages.slice(0, -1), { ...last, meanwhile, cautions }];
-  return [...pages, { lines: [], meanwhile, cautions }];
+  if (meanwhile.length === 0 || used + foot <= room) return [...pages.slice(0, -1), { ...last, meanwhile }];
+  return [...pages, { lines: [], meanwhile }];
 }

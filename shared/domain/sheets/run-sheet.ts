@@ -1,11 +1,12 @@
 import type { ItemKind, MadePlan, PlanItem } from '../../contracts/plan';
 import type { ProductionFile } from '../../contracts/resources';
+import { type PlanDay, planDays } from '../../planner/day';
 import type { ZoneClock } from '../../time/wall';
 import { zoneClock } from '../../time/wall';
-import { clock, dateOfWall } from '../../time/words';
+import { clock } from '../../time/words';
 import { DEFAULT_RULES } from '../defaults';
 import type { Minutes, PersonId, RoomId, WallDate, WallTime } from '../flavours';
-import { marksOf, midnightMark, type TimedMark } from './marks';
+import { marksOf, type TimedMark } from './marks';
 import { type Names, namesOf, partsInWords, partsOf, songWords } from './names';
 import { runPages } from './run-pages';
 import { dayCount, type RoomDay, usedDates, usedRoomDays } from './room-days';
@@ -38,7 +39,8 @@ export function runSheet(file: ProductionFile, plan: MadePlan, request: RunSheet
   const all = usedRoomDays(file, plan.items);
   const sameDate = all.filter((day) => day.date === request.date);
   const wanted = sameDate.filter((day) => request.room === undefined || day.room.id === request.room);
-  if (wanted.length === 0) return null;
+  const threads = planDays(file, plan).find((day) => day.date === request.date);
+  if (wanted.length === 0 || !threads) return null;
   const names = namesOf(file);
   const zone = zoneClock(file.production.timezone);
   const head = sheetHead(file, request.edition, request.paper);
@@ -54,10 +56,20 @@ export function runSheet(file: ProductionFile, plan: MadePlan, request: RunSheet
         room: day.room.name ?? day.room.id,
         facts: roomFacts(day, names),
         ends: endsOf(day, plan, file, zone),
-        pages: runPages(lines, meanwhileOf(day, sameDate, names), cautionsOf(day), head.paper),
+        pages: runPages(lines, meanwhileOf(day, sameDate, names), head.paper),
       };
     }),
+    threads: cropped(threads),
   };
+}
+
+/** A sheet shows one day only, so its drawing begins and ends with that day's own work, at full hours. */
+function cropped(day: PlanDay): PlanDay {
+  const first = Math.min(...day.items.map((item) => item.from));
+  const last = Math.max(...day.items.map((item) => item.to));
+  const from = day.hours.findLast((hour) => hour.at <= first)?.at ?? first;
+  const to = day.hours.find((hour) => hour.at >= last)?.at ?? last;
+  return { ...day, from, to, hours: day.hours.filter((hour) => from <= hour.at && hour.at <= to) };
 }
 
 /** The dates that have a run sheet. */
@@ -99,7 +111,7 @@ function rowOf(item: PlanItem, day: RoomDay, all: readonly RoomDay[], names: Nam
   };
   if (item.kind === 'pass') return { ...row, ...passWords(item, names) };
   if (item.kind === 'event') return { ...row, title: names.event(item.id) };
-  return { ...row, title: PLAIN_TITLES[item.kind], setup: '', task: plainTask(item, day, all, names) };
+  return { ...row, title: PLAIN_TITLES[item.kind], setup: '', task: plainTask(item, day, all, names), note: cautionFor(item) };
 }
 
 /** A rig is played by nobody, but those who get ready in it are there. */
@@ -135,6 +147,11 @@ function plainTask(item: PlanItem, day: RoomDay, all: readonly RoomDay[], names:
   return before?.setup === undefined || before.setup === item.setup
     ? `to ${names.setup(item.setup)}`
     : `${names.setup(before.setup)} → ${names.setup(item.setup)}`;
+}
+
+/** The usual caution where building and moving can hurt (common practice, no source; local rules and licensed people come first). */
+function cautionFor(item: PlanItem): string {
+  return item.kind === 'rig' || item.kind === 'changeover' ? 'two to lift, walkways clear, mute before patching' : '';
 }
 
 function roomFacts(day: RoomDay, names: Names): string[] {
@@ -181,24 +198,12 @@ function meanwhileOf(day: RoomDay, sameDate: readonly RoomDay[], names: Names): 
   );
 }
 
-/** The usual cautions where a day holds what can hurt; common practice, local rules and licensed people come first. */
-function cautionsOf(day: RoomDay): string[] {
-  const kinds = new Set(day.items.map((item) => item.kind));
-  return kinds.has('rig') || kinds.has('changeover')
-    ? ['While rigging: two to lift, walkways and exits stay clear, mute before patching, never lift a safety earth.']
-    : [];
-}
-
 /** Puts the marks between the rows by the clock: a mark at the start of a row stands before it. */
 function weave(rows: readonly { item: PlanItem; row: RunRow }[], marks: readonly TimedMark[]): RunLine[] {
   const lines: RunLine[] = [];
   let next = 0;
-  let date: WallDate | undefined;
   for (const { item, row } of rows) {
     for (let mark = marks[next]; mark !== undefined && mark.time <= item.start; mark = marks[++next]) lines.push(mark.mark);
-    const starts = dateOfWall(item.start);
-    if (date !== undefined && starts !== date) lines.push(midnightMark(fullDate(starts)));
-    date = starts;
     lines.push(row);
   }
   return [...lines, ...marks.slice(next).map((mark) => mark.mark)];

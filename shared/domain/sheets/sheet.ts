@@ -1,5 +1,6 @@
 import type { ItemKind } from '../../contracts/plan';
 import type { ProductionFile } from '../../contracts/resources';
+import type { PlanDay } from '../../planner/day';
 import { clock, dayWords } from '../../time/words';
 import type { Minutes, WallDate, WallTime } from '../flavours';
 
@@ -54,7 +55,7 @@ export interface RunRow {
   code: string;
   /** Title of the song, or what the item is. */
   title: string;
-  /** Parts and how they are captured, or what is done. */
+  /** Parts and how they are captured, or what is done; a caution where it can hurt. */
   task: string;
   /** Short names; empty where everybody or nobody in particular is meant. */
   people: string[];
@@ -70,14 +71,23 @@ export interface PeopleMark {
   release: string[];
 }
 
-/** A line between rows that does not move: a `stop` is drawn as a thick rule, `midnight` says which date begins. */
-export interface FixedMark {
-  is: 'stop' | 'midnight';
+/** A line between rows that does not move, drawn as a thick rule: who has to go, or what ends. */
+export interface StopMark {
+  is: 'stop';
+  at: string;
+  /** Short names of those who have to go; empty for anything else. */
+  who: string[];
+  says: string;
+}
+
+/** The line at which another date begins. */
+export interface MidnightMark {
+  is: 'midnight';
   at: string;
   says: string;
 }
 
-export type RunLine = RunRow | PeopleMark | FixedMark;
+export type RunLine = RunRow | PeopleMark | StopMark | MidnightMark;
 
 /** What goes on in another room at the same time. */
 export interface Meanwhile {
@@ -100,7 +110,6 @@ export interface RunRoom {
 export interface RunPage {
   lines: RunLine[];
   meanwhile: Meanwhile[];
-  cautions: string[];
 }
 
 export interface RunSheet {
@@ -111,6 +120,8 @@ export interface RunSheet {
   /** `day 1 of 4`. */
   count: string;
   rooms: RunRoom[];
+  /** The day of all rooms as a drawing, for the last page. */
+  threads: PlanDay;
 }
 
 /** One piece of a person's day: something to play, a pause, or time off. */
@@ -136,6 +147,8 @@ export interface CallDay {
   arrive: string;
   ready: string;
   release: { earliest: string; likely: string; latest: string };
+  /** Whether they go after midnight. */
+  overnight: boolean;
   lines: CallLine[];
   /** True where the day goes on from the page before. */
   continued: boolean;
