@@ -4,7 +4,7 @@ import { createServer } from 'vite';
 import { buildServer } from './build.mjs';
 import { end } from './processes.mjs';
 import { startServer, untilServing } from './server.mjs';
-import { say, tellTrouble } from './words.mjs';
+import { say } from './words.mjs';
 
 const DEVELOPMENT_BUILD = 'build/dev';
 
@@ -38,6 +38,7 @@ export async function serveForDevelopers({ cleanUp, ...settings }) {
   cleanUp.push(() => watcher.close());
   watcher.on('event', (event) => {
     if (event.code === 'ERROR') console.error(event.error.message);
-    if (event.code === 'END') turn = turn.then(restart).catch(tellTrouble); // it waits for the next change
+    if (event.code === 'END')
+      turn = turn.then(restart).catch(() => say('The server did not start; its words stand above. It waits for the next change.'));
   });
 }
