@@ -1,6 +1,7 @@
 // Makes ready what is missing: Debian's packages, the npm packages, the build. No dependencies: runs before `npm ci`.
 import { spawnSync } from 'node:child_process';
 import fs from 'node:fs';
+import { claim } from './claim.mjs';
 import { hasPostgres } from './postgres.mjs';
 import { run } from './processes.mjs';
 import { buildIsFresh } from './sources.mjs';
@@ -8,6 +9,7 @@ import { say, step, Trouble, troubleFrom } from './words.mjs';
 
 const NO_MAIN_CLUSTER = '/etc/postgresql-common/createcluster.d/no-main-cluster.conf';
 const CHROMIUM = '/usr/bin/chromium';
+const BUILDING = 'node_modules/.cache/redpoll-build.json';
 
 /**
  * What this machine lacks, as names of Debian packages.
@@ -91,9 +93,17 @@ async function installNpmPackages() {
   });
 }
 
+/** Builds; a second start or test run that wants to build meanwhile waits, and finds it done. */
 async function build() {
-  const { code, output } = await run(process.execPath, ['server/bin/build.mjs']);
-  if (code !== 0) throw troubleFrom('Building the app', output);
+  let taken = claim(BUILDING, {});
+  for (; taken.holder; taken = claim(BUILDING, {})) await new Promise((resolve) => setTimeout(resolve, 200));
+  try {
+    if (buildIsFresh()) return;
+    const { code, output } = await run(process.execPath, ['server/bin/build.mjs']);
+    if (code !== 0) throw troubleFrom('Building the app', output);
+  } finally {
+    taken.release();
+  }
 }
 
 /**
