@@ -1,6 +1,6 @@
 import type { NextFunction, Request, Response } from 'express';
 import multer from 'multer';
-import { ForeignKeyConstraintError, UniqueConstraintError } from 'sequelize';
+import { ConnectionError, ForeignKeyConstraintError, UniqueConstraintError } from 'sequelize';
 import type { Fault, ProblemDetails } from '../../shared/contracts/api';
 
 const TITLES = {
@@ -14,6 +14,7 @@ const TITLES = {
   misdirected: [421, 'Unknown host'],
   'wrong-fields': [422, 'Something in it is wrong'],
   'too-many': [429, 'Too many attempts'],
+  unavailable: [503, 'Not available just now'],
   'server-fault': [500, 'A fault of ours'],
 } as const satisfies Record<string, [number, string]>;
 export type RefusalCode = keyof typeof TITLES;
@@ -67,6 +68,8 @@ function knownRefusal(error: unknown): Refusal | null {
     return new Refusal('conflict', 'Somebody saved the same thing just now. Load the page again.');
   if (error instanceof ForeignKeyConstraintError)
     return new Refusal('conflict', 'Something it names was removed just now. Load the page again.');
+  if (error instanceof ConnectionError)
+    return new Refusal('unavailable', 'The database does not answer. Nothing was changed: try again in a moment.');
   switch (codeOf(error)) {
     case 'entity.parse.failed':
     case 'encoding.unsupported':
@@ -90,7 +93,7 @@ export function answerError(error: unknown, request: Request, response: Response
     return;
   }
   const refusal = knownRefusal(error);
-  if (!refusal) request.log.error({ err: error }, 'unexpected error');
+  if (!refusal || refusal.status >= 500) request.log.error({ err: error }, 'unexpected error');
   sendProblem(
     response,
     refusal ?? new Refusal('server-fault', 'Something went wrong on our side; it is in the log. Nothing was changed: try again.'),

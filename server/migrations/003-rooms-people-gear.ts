@@ -86,8 +86,6 @@ create table changeovers (
   removed_at timestamptz,
   given_empty text[] not null default '{}',
   extra json,
-  created_at timestamptz not null default now(),
-  updated_at timestamptz not null default now(),
   ${ref('from_setup_id', 'setups', 'not null')},
   ${ref('to_setup_id', 'setups', 'not null')},
   minutes integer not null check (minutes >= 0),

@@ -27,8 +27,6 @@ export const ROW = `
   removed_at timestamptz,
   given_empty text[] not null default '{}',
   extra json,
-  created_at timestamptz not null default now(),
-  updated_at timestamptz not null default now(),
   unique (production_id, id)`;
 
 /** A reference to a row of the same production: the production is part of the foreign key, so that none reaches across. */

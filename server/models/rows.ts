@@ -36,7 +36,13 @@ const KEY: Columns = { key: words };
 
 /** Attributes that the fields of a kind of row do not name. */
 const identity: Record<ResourceName, Columns> = {
-  production: { ...common, createdBy: uuid, revision: whole, headRevision: whole, updatedAt: createdAt },
+  production: {
+    ...common,
+    createdBy: uuid,
+    revision: { ...whole, defaultValue: 0 },
+    headRevision: { ...whole, defaultValue: 0 },
+    updatedAt: createdAt,
+  },
   rooms: { ...within, ...KEY },
   people: { ...within, ...KEY },
   gear: { ...within, ...KEY },

@@ -1,0 +1,18 @@
+import type { Context } from '../context';
+import type { Routes } from '../http/routes';
+import { accountRoutes } from './account/routes';
+import { changeRoutes } from './changes/routes';
+import { healthRoutes } from './health/routes';
+import { productionRoutes } from './productions/routes';
+import { sessionRoutes } from './session/routes';
+import { startingPointRoutes } from './starting-points/routes';
+
+/** Every resource that opens addresses; each writes its paths out in full. */
+export const resources: readonly ((routes: Routes, context: Context) => void)[] = [
+  healthRoutes,
+  sessionRoutes,
+  accountRoutes,
+  startingPointRoutes,
+  productionRoutes,
+  changeRoutes,
+];
