@@ -40,16 +40,17 @@ function withPart(file: ProductionFile, songId: SongId, part: Part): ProductionF
 }
 
 /**
- * Edits for one cell. `partName` names the column (see `columnsOfSong`), in any writing.
+ * Edits for one cell. `partName` names the column (see `columnsOfSong`), in any writing. `remembered` is a part that stood in the cell
+ * before it was removed; it comes back with all it had.
  * Empty where there is nothing to change, or no such song.
  */
-export function changesForCell(file: ProductionFile, songId: SongId, partName: string, wanted: CellEdit): Edit[] {
+export function changesForCell(file: ProductionFile, songId: SongId, partName: string, wanted: CellEdit, remembered?: Part): Edit[] {
   const song = songOf(file, songId);
   if (!song) return [];
   const part = partInColumn(song, partName.trim().toLowerCase());
   if ('mode' in wanted) {
     if (wanted.mode === null) return part ? dropParts(file, new Map([[songId, new Set([part.id])]])) : [];
-    if (!part) return addPart(file, song, partName.trim(), wanted.mode);
+    if (!part) return addPart(file, song, partName.trim(), wanted.mode, remembered);
     return part.mode === wanted.mode ? [] : changeMode(file, song, part, wanted.mode);
   }
   if (!part) return [];
@@ -68,20 +69,14 @@ function usualPlayers(file: ProductionFile, column: ColumnKey): PersonId[] {
   return [...counts.values()].reduce((most, one) => (one.times > most.times ? one : most), { players: [] as PersonId[], times: 0 }).players;
 }
 
-function addPart(file: ProductionFile, song: Song, name: string, mode: PartMode): Edit[] {
+function addPart(file: ProductionFile, song: Song, name: string, mode: PartMode, remembered?: Part): Edit[] {
   const players = usualPlayers(file, name.toLowerCase());
   const named = displayName(file, name);
-  const id = freeId(
-    named,
-    (song.parts ?? []).map((part) => part.id),
-    'part',
-  );
-  const part: Part = { id, name: named, mode, ...(players.length > 0 ? { players } : {}) };
-  const after = withPart(file, song.id, part);
-  return [
-    edit.create('parts', partKey(song.id, id), { name: named, mode, ...(players.length > 0 ? { players } : {}) }),
-    ...enter(after, song.id, part),
-  ];
+  const taken = (song.parts ?? []).map((part) => part.id);
+  const fresh: Part = { id: freeId(named, taken, 'part'), name: named, mode, ...(players.length > 0 ? { players } : {}) };
+  const part = remembered && !taken.includes(remembered.id) ? { ...remembered, mode } : fresh;
+  const { id, ...fields } = part;
+  return [edit.create('parts', partKey(song.id, id), fields), ...enter(withPart(file, song.id, part), song.id, part)];
 }
 
 /** The column's name as the other songs write it. */

@@ -1,6 +1,6 @@
 import { onScopeDispose, type Ref } from 'vue';
 import { useEventListener } from '@vueuse/core';
-import { usePage } from '../stores/page';
+import { type KeyLine, usePage } from '../stores/page';
 
 export interface KeyBinding {
   /** `Alt+ArrowUp`, `Ctrl+Enter`, `p`, `?`; letters in small, whatever the Shift key says. */
@@ -31,7 +31,13 @@ export function isTyping(target: EventTarget | null): boolean {
 /**
  * Keys that hold while `within` has the focus (WCAG 2.1.4: single letters never outside of it), and their lines in the list of keys.
  */
-export function useKeys(where: string, within: Ref<HTMLElement | null | undefined>, bindings: KeyBinding[]): void {
+export function useKeys(
+  where: string,
+  within: Ref<HTMLElement | null | undefined>,
+  bindings: KeyBinding[],
+  /** Lines for keys that are bound elsewhere, or that several bindings share. */
+  shared: KeyLine[] = [],
+): void {
   const page = usePage();
   const byKey = new Map(bindings.map((binding) => [binding.key, binding]));
   useEventListener(within, 'keydown', (event: KeyboardEvent) => {
@@ -42,6 +48,6 @@ export function useKeys(where: string, within: Ref<HTMLElement | null | undefine
       event.stopPropagation();
     }
   });
-  const lines = bindings.flatMap(({ shown, does }) => (shown && does ? [{ keys: shown, does }] : []));
+  const lines = [...shared, ...bindings.flatMap(({ shown, does }) => (shown && does ? [{ keys: shown, does }] : []))];
   if (lines.length > 0) onScopeDispose(page.addKeys({ where, lines }));
 }

@@ -65,6 +65,14 @@ describe('a cell where passes are derived', () => {
     expect(partsOf(after, 's1')[2]?.after).toEqual([{ pass: 's1-basics' }]);
   });
 
+  it('brings a part back with all it had', () => {
+    const file = smallBand();
+    const sax = partsOf(file, 's1')[2]!;
+    const without = cell(file, 's1', 'Sax', { mode: null });
+    const back = edited(without, changesForCell(without, 's1', 'Sax', { mode: 'double' }, sax));
+    expect(partsOf(back, 's1').find(({ id }) => id === 'sax')).toEqual({ ...sax, mode: 'double' });
+  });
+
   it('moves the range with the likely minutes', () => {
     const after = cell(smallBand(), 's1', 'Sax', { minutes: 60 });
     expect(partsOf(after, 's1')[2]?.minutes).toEqual([40, 60, 95]);
