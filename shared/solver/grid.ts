@@ -1,5 +1,5 @@
 import type { Minute, Minutes } from '../domain/flavours';
-import { EVER, NEVER, type GridStretch } from './model';
+import { EVER, NEVER, type GridStretch, type Span } from './model';
 
 /** The first grid point of a room-day at or after a minute, or `EVER`. */
 export function gridAtOrAfter(grid: readonly GridStretch[], step: Minutes, minute: Minute): Minute {
@@ -21,4 +21,10 @@ export function gridAtOrBefore(grid: readonly GridStretch[], step: Minutes, minu
     return minute - ((minute - phase) % step);
   }
   return NEVER;
+}
+
+/** The first minute at or after one that a wall clock can name: repeated times of the autumn are passed over. */
+export function nameable(hidden: readonly Span[], minute: Minute): Minute {
+  for (const { from, to } of hidden) if (from <= minute && minute < to) return to;
+  return minute;
 }

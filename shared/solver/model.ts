@@ -96,6 +96,8 @@ export interface GearModel {
   id: GearId;
   count: number;
   windows: Span[] | null;
+  /** Passes that use it. */
+  passes: number[];
 }
 
 export interface SetupModel {

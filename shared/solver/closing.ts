@@ -1,0 +1,180 @@
+import type { Minute, Minutes } from '../domain/flavours';
+import { CHANGEOVER, RIG, type Board } from './board';
+import { gridAtOrAfter } from './grid';
+import { EVER, within, type Problem } from './model';
+import { BREAK, MEAL, Rests } from './rests';
+import { layTail, reserveOf, type TailSink } from './tail';
+
+/** Minutes and counts that the cost is made of; `waiting` is weighted by the people's fees already. */
+export interface Tally {
+  waiting: number;
+  changeover: Minutes;
+  days: number;
+  overtime: Minutes;
+  calls: number;
+  maybe: Minutes;
+}
+
+/** Hears what closing a date adds. Pauses stand in `Closer.rests`, which `named` counts by position. */
+export interface ClosingSink {
+  work(kind: 'reserve' | 'wrap', day: number, from: Minute, to: Minute): void;
+  name(rest: number, person: number): void;
+  /** All pauses of the date stand and all their people are named. */
+  rests(): void;
+  /** `first` and `last` are positions in the board's entries. */
+  call(person: number, date: number, first: number, last: number, waiting: Minutes): void;
+}
+
+/** Closes a date once all its passes are placed: pauses are named, reserve and wrap laid, and the date's cost is counted. */
+export class Closer {
+  readonly rests: Rests;
+  private readonly daysOf: number[][];
+  private left: Minutes = 0;
+  private lastMeal: Minute = 0;
+  private day = 0;
+  private previous: Minute = 0;
+  private sink: ClosingSink | null = null;
+  private readonly pieces: TailSink;
+
+  constructor(
+    private readonly problem: Problem,
+    private readonly board: Board,
+  ) {
+    this.rests = new Rests(problem);
+    this.daysOf = problem.dates.map((_, date) => problem.days.flatMap((day, d) => (day.dateIndex === date ? [d] : [])));
+    this.pieces = {
+      reserve: (from, to) => this.piece('reserve', from, to),
+      wrap: (from, to) => this.piece('wrap', from, to),
+    };
+  }
+
+  /** Adds what a date costs to the tally. False where a room-day could not be closed within its hours. */
+  close(date: number, tally: Tally, sink: ClosingSink | null = null): boolean {
+    this.sink = sink;
+    this.rests.count = 0;
+    for (const d of this.daysOf[date]!) if (this.board.head[d]! >= 0 && !this.closeDay(d, tally)) return false;
+    for (let q = 0; q < this.problem.people.length; q++) this.closePerson(q, date, tally);
+    sink?.rests();
+    return true;
+  }
+
+  private closeDay(d: number, tally: Tally): boolean {
+    const { board, problem } = this;
+    const first = board.first[d]!;
+    this.day = d;
+    this.left = board.passCount[d]! > 0 ? reserveOf(problem, board.minutes[d]!) : 0;
+    this.lastMeal = first;
+    this.previous = first;
+    for (let item = board.head[d]!; item >= 0; item = board.itemNext[item]!) {
+      if (board.itemStart[item]! > this.previous) this.gap(this.previous, board.itemStart[item]!, true);
+      this.previous = board.itemEnd[item]!;
+      const kind = board.itemKind[item];
+      if (kind === RIG || kind === CHANGEOVER) tally.changeover += board.itemEnd[item]! - board.itemStart[item]!;
+    }
+    if (board.passCount[d]! > 0) {
+      const end = layTail(problem, d, board.last[d]!, board.mealFrom[d]!, board.breakFrom[d]!, this.left, this.pieces);
+      if (end >= EVER) return false;
+    }
+    tally.days += 1;
+    const { standard } = problem.rooms[problem.days[d]!.room]!;
+    const over = standard === null ? 0 : board.last[d]! - first - standard;
+    if (over > 0) tally.overtime += over;
+    return true;
+  }
+
+  private piece(kind: 'reserve' | 'wrap', from: Minute, to: Minute): void {
+    if (from > this.previous) this.gap(this.previous, from, false);
+    this.previous = to;
+    this.board.work(this.day, from, to);
+    this.sink?.work(kind, this.day, from, to);
+  }
+
+  /** Idle time between two items: a meal, a break, or reserve where it is too short for a pause. */
+  private gap(from: Minute, to: Minute, fill: boolean): void {
+    const { problem } = this;
+    const { rules } = problem;
+    const pauses = (rules.meal > 0 && to - from >= rules.meal) || (rules.break > 0 && to - from >= rules.break);
+    let at = from;
+    for (const index of problem.rooms[problem.days[this.day]!.room]!.events) {
+      const event = problem.events[index]!;
+      if (event.to <= at || event.from >= to) continue;
+      if (pauses) this.pause(at, event.from);
+      else if (fill) this.fill(at, event.from);
+      at = event.to;
+    }
+    if (at >= to) return;
+    if (pauses) this.pause(at, to);
+    else if (fill) this.fill(at, to);
+  }
+
+  private fill(from: Minute, to: Minute): void {
+    const { grid } = this.problem.days[this.day]!;
+    const { step } = this.problem.rules;
+    if (this.left <= 0 || grid.length > 1) return;
+    const start = gridAtOrAfter(grid, step, from);
+    const room = to - start - ((to - start) % step);
+    const length = Math.min(this.left, room);
+    if (length < step) return;
+    this.left -= length;
+    this.sink?.work('reserve', this.day, start, start + length);
+  }
+
+  private pause(from: Minute, to: Minute): void {
+    const { rules, lengths, days } = this.problem;
+    const { grid } = days[this.day]!;
+    const start = gridAtOrAfter(grid, rules.step, from);
+    let end = to - ((((to - start) % rules.step) + rules.step) % rules.step);
+    let length = end - start;
+    const mealFits = rules.meal > 0 && length >= lengths.meal;
+    if (grid.length > 1) {
+      // Across a clock change a pause stays as short as it may be, so that its end is on the grid.
+      const wanted = mealFits ? lengths.meal : lengths.break;
+      if (length < wanted) return;
+      end = start + wanted;
+      length = wanted;
+      if (gridAtOrAfter(grid, rules.step, end) !== end) return;
+    }
+    if (mealFits && start - this.lastMeal >= rules.mealAfter / 2) {
+      const rest = length - lengths.meal;
+      const split = rules.break > 0 && rest >= lengths.break;
+      const mealEnd = split ? start + lengths.meal : end;
+      this.rests.add(MEAL, start, mealEnd, this.day);
+      this.lastMeal = mealEnd;
+      if (split) this.rests.add(BREAK, mealEnd, end, this.day);
+    } else if (rules.break > 0 && length >= lengths.break) this.rests.add(BREAK, start, end, this.day);
+    else if (mealFits) this.rests.add(MEAL, start, end, this.day);
+  }
+
+  private closePerson(q: number, date: number, tally: Tally): void {
+    const { board, problem } = this;
+    const offset = board.offset[q]!;
+    let last = offset + board.entryCount[q]! - 1;
+    while (last >= offset && board.entryDate[last]! > date) last -= 1;
+    let first = last;
+    while (first >= offset && board.entryDate[first] === date) first -= 1;
+    first += 1;
+    if (first > last) return;
+    tally.calls += 1;
+    const person = problem.people[q]!;
+    const { entryStart, entryEnd } = board;
+    let waited = 0;
+    for (let i = first; i <= last;) {
+      const from = entryStart[i]!;
+      let to = entryEnd[i]!;
+      let work = to - from;
+      let k = i + 1;
+      for (; k <= last && (person.away === null || entryStart[k]! - to < person.away); k++) {
+        to = entryEnd[k]!;
+        work += to - entryStart[k]!;
+      }
+      const rest = this.rests.of(from, to, entryStart, entryEnd, i, k);
+      if (this.sink) for (let r = 0; r < this.rests.count; r++) if (this.rests.named[r] === 1) this.sink.name(r, q);
+      const idle = to - from - work - rest;
+      if (idle > 0) waited += idle;
+      if (person.sure !== null) tally.maybe += to - from - within(person.sure, from, to);
+      i = k;
+    }
+    tally.waiting += waited * person.waiting;
+    this.sink?.call(q, date, first, last, waited);
+  }
+}
