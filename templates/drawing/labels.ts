@@ -51,7 +51,7 @@ export function labelOf(
 
   const soft = item.kind !== 'pass' && item.kind !== 'event';
   const titleAt = plain ? size : Math.min(size, type.line + 1);
-  const times = `${item.starts}–${item.ends}${item.pinned ? ' · pinned' : ''}`;
+  const times = timesOf(item, block.width - INSET - 4, type.line);
   const withTimes = block.height >= lineHeight(titleAt) + lineHeight(type.line) + 4;
   const spare = block.height - 4 - (withTimes ? lineHeight(type.line) : 0);
   const most = Math.max(1, Math.min(3, Math.floor(spare / lineHeight(titleAt))));
@@ -72,12 +72,17 @@ export function labelOf(
   words.slice(1).forEach((text, index) => {
     lines.push({ y: baseline(index + 1, titleAt), size: titleAt, runs: [{ x, text, bold: false, soft }] });
   });
-  if (withTimes) {
-    const text = fitText(times, block.width - INSET - 4, type.line);
-    if (text !== '')
-      lines.push({ y: baseline(Math.max(1, words.length), type.line), size: type.line, runs: [{ x, text, bold: false, soft: true }] });
+  if (withTimes && times !== '') {
+    lines.push({ y: baseline(Math.max(1, words.length), type.line), size: type.line, runs: [{ x, text: times, bold: false, soft: true }] });
   }
   return { lines, pin: item.pinned ? pinAt(block) : null };
+}
+
+/** The times of an item, with the word for its pin where there is room for it (the mark stands in any case). */
+function timesOf(item: DayItem, width: number, size: number): string {
+  const times = `${item.starts}–${item.ends}`;
+  const pinned = `${times} · pinned`;
+  return item.pinned && textWidth(pinned, size) <= width ? pinned : fitText(times, width, size);
 }
 
 /** The size of a block's title: full where there is room, smaller down to the least, none below. */

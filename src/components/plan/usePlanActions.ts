@@ -1,0 +1,88 @@
+import { ref, type ComputedRef, type Ref } from 'vue';
+import type { Pin, ProductionFile } from '../../../shared/contracts/resources';
+import type { PassId } from '../../../shared/domain/flavours';
+import { editsToSetPass } from '../../../shared/domain/passes';
+import { namesOf } from '../../../shared/domain/sheets/names';
+import type { PlanDay } from '../../../shared/planner/day';
+import { type Direction, findPass, moveOf, pinInWords } from '../../../shared/planner/moves';
+import { zoneClock } from '../../../shared/time/wall';
+import type { Edit } from '../../../shared/domain/edits';
+
+interface Desk {
+  file: ComputedRef<ProductionFile>;
+  days: ComputedRef<PlanDay[]>;
+  mayChange: ComputedRef<boolean>;
+  /** Applies edits; false where they were refused. */
+  apply: (edits: Edit[]) => boolean;
+  /** Plans again around what has changed. */
+  replan: () => void;
+  say: (sentence: string) => void;
+}
+
+export interface LastAction {
+  says: string;
+  /** The edits that take it back. */
+  back: Edit[];
+}
+
+/** Pins, moves and leaving out: each is a change of the production, said aloud, and can be taken back. */
+export function usePlanActions({ file, days, mayChange, apply, replan, say }: Desk): {
+  last: Ref<LastAction | null>;
+  togglePin: (pass: PassId) => void;
+  unpin: (pass: PassId) => void;
+  toggleLeftOut: (pass: PassId) => void;
+  move: (pass: PassId, direction: Direction) => void;
+  takeBack: () => void;
+} {
+  const last = ref<LastAction | null>(null);
+  const passOf = (id: PassId) => namesOf(file.value).pass(id);
+
+  function set(id: PassId, fields: Edit['fields'], says: string, thenPlan: boolean): void {
+    const before = passOf(id);
+    if (!before || !mayChange.value) return;
+    const known: Record<string, unknown> = { ...before };
+    const old = Object.fromEntries(Object.keys(fields).map((field) => [field, known[field] ?? null]));
+    if (!apply(editsToSetPass(file.value, id, fields))) return say('That was not taken; see what was refused at the top right.');
+    last.value = { says, back: [{ resource: 'passes', key: id, op: 'update', fields: old }] };
+    say(says);
+    if (thenPlan) replan();
+  }
+
+  function setPin(id: PassId, pin: Pin | null, says: string): void {
+    set(id, { pin }, says, true);
+  }
+
+  function unpin(id: PassId): void {
+    setPin(id, null, 'Unpinned.');
+  }
+
+  function togglePin(id: PassId): void {
+    const pass = passOf(id);
+    if (pass?.pin) return unpin(id);
+    const found = findPass(days.value, id);
+    if (!found) return;
+    const pin = { at: zoneClock(file.value.production.timezone).wallOf(found.item.from) };
+    // The plan stands as it is: what is pinned where it is needs no new one.
+    set(id, { pin }, `Pinned ${pinInWords(pin)}.`, false);
+  }
+
+  function toggleLeftOut(id: PassId): void {
+    const out = passOf(id)?.leftOut ?? false;
+    set(id, { leftOut: out ? null : true }, out ? 'Taken in again.' : 'Left out.', true);
+  }
+
+  function move(id: PassId, direction: Direction): void {
+    const moved = moveOf(file.value, days.value, id, direction);
+    if ('refused' in moved) say(moved.refused);
+    else setPin(id, moved.pin, `${moved.says}. Pinned there.`);
+  }
+
+  function takeBack(): void {
+    if (!last.value || !apply(last.value.back)) return;
+    last.value = null;
+    say('Taken back.');
+    replan();
+  }
+
+  return { last, togglePin, unpin, toggleLeftOut, move, takeBack };
+}
