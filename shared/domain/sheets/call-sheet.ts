@@ -1,14 +1,15 @@
 import type { MadePlan, PlanCall, PlanItem } from '../../contracts/plan';
-import type { Person, ProductionFile, Song } from '../../contracts/resources';
+import type { ProductionFile, Song } from '../../contracts/resources';
 import { type ZoneClock, zoneClock } from '../../time/wall';
-import { clock, dateOfWall, dayWords, length } from '../../time/words';
+import { clock, dateOfWall, length } from '../../time/words';
 import type { PersonId, WallDate } from '../flavours';
+import { callFacts } from './call-facts';
 import { callPages } from './call-pages';
 import { isOwn } from './marks';
 import { type Names, namesOf, partName, partsOf, songWords } from './names';
 import { releaseRange } from './release';
 import { dayCount, type RoomDay, usedDates, usedRoomDays } from './room-days';
-import { type CallDay, type CallFact, type CallLine, type CallSheet, fullDate, type Paper, type SheetEdition, sheetHead } from './sheet';
+import { type CallDay, type CallLine, type CallSheet, fullDate, type Paper, type SheetEdition, sheetHead } from './sheet';
 
 export interface CallSheetRequest {
   person: PersonId;
@@ -25,22 +26,33 @@ const WORTH_A_LINE = 20;
  * @returns `null` when the plan does not call that person.
  */
 export function callSheet(file: ProductionFile, plan: MadePlan, request: CallSheetRequest): CallSheet | null {
-  const calls = plan.calls.filter((call) => call.person === request.person).sort((a, b) => (a.date < b.date ? -1 : 1));
-  if (calls.length === 0) return null;
-  const names = namesOf(file);
-  const zone = zoneClock(file.production.timezone);
-  const person = names.person(request.person);
-  const roomDays = usedRoomDays(file, plan.items);
-  const dates = usedDates(file, plan.items);
-  const days = calls.map((call) => callDay(call, file, plan, roomDays, dates, names, zone));
+  const days = callDays(file, plan, request.person);
+  if (days.length === 0) return null;
+  const person = namesOf(file).person(request.person);
   const head = sheetHead(file, request.edition, request.paper);
   return {
     head,
     person: request.person,
     name: person?.name ?? person?.short ?? request.person,
     plays: (person?.plays ?? []).join(', '),
-    pages: callPages(days, callFacts(file, plan, person, request.person, names), head.paper),
+    pages: callPages(
+      days.map(({ day }) => day),
+      callFacts(file, plan, request.person),
+      head.paper,
+    ),
   };
+}
+
+/** Every call of a person in order of time, with what their day holds. */
+export function callDays(file: ProductionFile, plan: MadePlan, person: PersonId): { call: PlanCall; day: CallDay }[] {
+  const names = namesOf(file);
+  const zone = zoneClock(file.production.timezone);
+  const roomDays = usedRoomDays(file, plan.items);
+  const dates = usedDates(file, plan.items);
+  return plan.calls
+    .filter((call) => call.person === person)
+    .sort((a, b) => (a.arrive < b.arrive ? -1 : 1))
+    .map((call) => ({ call, day: callDay(call, file, plan, roomDays, dates, names, zone) }));
 }
 
 /** Everybody whom the plan calls, in the order of the people of the production. */
@@ -144,44 +156,4 @@ function tempoWords(song: Song): string {
       : `${song.tempo}`;
   const click = song.click === true ? 'click' : song.click === false ? 'no click' : '';
   return [tempo, song.meter ?? '', click].filter((text) => text !== '').join(' · ');
-}
-
-const QUIET_DRESS = 'Quiet: soft shoes, nothing that rustles, no jewellery that sounds.';
-
-function callFacts(file: ProductionFile, plan: MadePlan, person: Person | undefined, id: PersonId, names: Names): CallFact[] {
-  const { place, late, dress } = file.production;
-  const passes = plan.items.flatMap((item) => {
-    const pass = item.kind === 'pass' ? names.pass(item.id) : undefined;
-    return pass && item.people.includes(id) ? [pass] : [];
-  });
-  const ears = passes.some((pass) => pass.loud) ? 'Loud work: bring ear protection, start with the headphones turned down.' : '';
-  const voice = sungByDay(plan, id, names)
-    .map(({ date, minutes }) => `${dayWords(date)} about ${length(minutes)}`)
-    .join(', ');
-  const facts: [string, string | undefined][] = [
-    ['Where', [place?.name, place?.address].filter(Boolean).join(', ')],
-    ['Door', place?.door],
-    ['Parking', place?.parking],
-    ['Phone', place?.phone],
-    ['Late?', late === undefined ? undefined : `Ring ${late}`],
-    ['Bring', (person?.bring ?? []).join(', ')],
-    ['Wear', dress ?? QUIET_DRESS],
-    ['Food', person?.food],
-    ['Access', person?.access],
-    ['Headphones', person?.headphones],
-    ['Ears', ears],
-    ['Voice', voice === '' ? '' : `${voice} of singing. Warm up, keep water by you, rest between takes.`],
-  ];
-  return facts.flatMap(([label, says]) => (says === undefined || says.trim() === '' ? [] : [{ label, says }]));
-}
-
-/** Singing minutes of each day, so that the voice can be spared the evening before. */
-function sungByDay(plan: MadePlan, person: PersonId, names: Names): { date: WallDate; minutes: number }[] {
-  const sung = new Map<WallDate, number>();
-  for (const item of plan.items) {
-    const minutes = item.kind === 'pass' ? (names.pass(item.id)?.voice?.[person] ?? 0) : 0;
-    const date = plan.calls.find((call) => call.person === person && call.arrive <= item.start && item.end <= call.release)?.date;
-    if (minutes > 0 && date !== undefined) sung.set(date, (sung.get(date) ?? 0) + minutes);
-  }
-  return [...sung].map(([date, minutes]) => ({ date, minutes })).sort((a, b) => (a.date < b.date ? -1 : 1));
 }

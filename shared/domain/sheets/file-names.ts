@@ -8,7 +8,7 @@ function portable(text: string): string {
     .toUpperCase()
     .replace(/[^A-Z0-9]+/g, '-')
     .replace(/^-+|-+$/g, '')
-    .slice(0, 40);
+    .slice(0, 64);
 }
 
 export interface NamedDocument {

@@ -34,10 +34,8 @@ function withoutOrphans(pages: RunLine[][]): RunLine[][] {
 /** Splits a room-day into pages. What goes on elsewhere stands on the last one, or on one of its own. */
 export function runPages(lines: readonly RunLine[], meanwhile: Meanwhile[], paper: Paper): RunPage[] {
   const room = PAGE_MM[paper].live - HEADER;
-  const pages = fillPages(lines, heightOfRunLine, room, MOST_ROWS, (line) => line.is === 'row').map((page): RunPage => ({
-    lines: page,
-    meanwhile: [],
-  }));
+  const filled = fillPages(lines, heightOfRunLine, room, MOST_ROWS, (line) => line.is === 'row');
+  const pages = withoutOrphans(filled).map((page): RunPage => ({ lines: page, meanwhile: [] }));
   const foot = 9 + meanwhile.reduce((sum, one) => sum + linesOf(one.says, 130) * BODY, 0);
   const last = pages.at(-1)!;
   const used = last.lines.reduce((sum, line) => sum + heightOfRunLine(line), 0);
