@@ -71,13 +71,16 @@ export const weights = z.object({
 });
 export type Weights = z.infer<typeof weights>;
 
+const CURRENCY = 'a currency of three capital letters such as EUR';
+
 /** What is one per production: its name, place, rules and weights. */
 export const production = z.object({
   code: text(40).regex(/\S/, { error: 'a short code such as SLUICE' }),
   title,
   timezone: text(64).refine(isZone, { error: 'an IANA time zone such as Europe/Lisbon' }),
-  currency: text(3)
-    .regex(/^[A-Z]{3}$/, { error: 'a currency of three capital letters such as EUR' })
+  currency: z
+    .string({ error: CURRENCY })
+    .regex(/^[A-Z]{3}$/, { error: CURRENCY })
     .optional(),
   pitch: positive.optional(),
   recording: z.object({ rate: whole(1).optional(), bits: whole(1).optional() }).optional(),

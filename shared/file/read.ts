@@ -1,11 +1,12 @@
 import type { z } from 'zod';
 import type { Fault } from '../contracts/api';
 import * as resources from '../contracts/resources';
-import { changeoverFaults, doubts, emptyPins, overlappingHours, passesWithoutRoom, skippedTimes } from './checks';
+import { doubts } from './checks';
+import { crossFaults } from './cross';
 import { expectedBy, faultsOf } from './issues';
 import { LIMITS } from './limits';
 import { fieldOf, type Fields, isFields, itemsOf, type Path, writePath } from './paths';
-import { derivedIdFaults, LISTS, repeatedIds, selfReferences, strangeParts, unknownReferences } from './references';
+import { LISTS } from './references';
 import { separate, type UnknownField } from './unknown';
 import { type PathFault, readText } from './yaml';
 
@@ -35,12 +36,12 @@ export function readProductionFile(text: string): ReadResult {
   return { ok: true, file, warnings: [...warnings, ...tell(doubts(file), read.lineOf)] };
 }
 
-/** Faults with their lines, in the order of the file, each once. */
+/** Faults with their lines, in the order of the file; of several at one value the first, because it often brings the others about. */
 function tell(faults: PathFault[], lineOf: (fault: PathFault) => number): Fault[] {
   const told = new Map<string, Fault & { line: number }>();
   for (const fault of faults.slice(0, LIMITS.faults)) {
     const one = { path: writePath(fault.path), line: lineOf(fault), expected: fault.expected };
-    told.set(`${one.path}\n${one.expected}`, one);
+    if (one.path === 'file' || !told.has(one.path)) told.set(one.path === 'file' ? `file ${one.line}` : one.path, one);
   }
   const sorted = [...told.values()].sort((a, b) => a.line - b.line);
   const more = faults.length - LIMITS.faults;
@@ -115,19 +116,7 @@ function readRoot(root: unknown, found: Findings): resources.ProductionFile | un
     ...(passes === undefined ? {} : { passes: found.list(root, 'passes', MOST, found.resource(resources.pass)) }),
     events: found.list(root, 'events', MOST, found.resource(resources.event)),
   };
-  found.faults.push(
-    ...repeatedIds(root),
-    ...unknownReferences(root),
-    ...selfReferences(root),
-    ...strangeParts(root),
-    ...derivedIdFaults(root),
-    ...overlappingHours(root),
-    ...passesWithoutRoom(root),
-    ...changeoverFaults(root),
-    ...emptyPins(root),
-  );
-  const zone = resources.production.shape.timezone.safeParse(fieldOf(root.production, 'timezone'));
-  if (zone.success) found.faults.push(...skippedTimes(root, zone.data));
+  found.faults.push(...crossFaults(root));
   return production && { production, ...rest };
 }
 

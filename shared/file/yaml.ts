@@ -73,8 +73,11 @@ export function readText(text: string): ReadText {
   const places = new Map<PathFault, number>();
   const faults: PathFault[] = [];
   for (const error of [...document.errors, ...document.warnings]) {
-    const fault = { path: pathAt(document, error.pos[0]), expected: SYNTAX[error.code] };
-    places.set(fault, line(error.pos[0]));
+    const { path, node } = around(document, error.pos[0]);
+    const fault = { path, expected: SYNTAX[error.code] };
+    // A quote that is never closed is seen at the end of what it swallowed; it is told where it opens.
+    const quoted = isScalar(node) && (node.type === 'QUOTE_DOUBLE' || node.type === 'QUOTE_SINGLE');
+    places.set(fault, line((error.code === 'MISSING_CHAR' && quoted ? startOf(node) : undefined) ?? error.pos[0]));
     faults.push(fault);
   }
   const { yaml } = document.directives ?? {};
@@ -200,21 +203,23 @@ function offsetsOf(document: Document, aliases: ReadonlyMap<Alias, Node>): (faul
 
 const startOf = (node: unknown): number | undefined => (isNode(node) ? node.range?.[0] : undefined);
 
-/** The path of the innermost value around an offset. */
-function pathAt(document: Document, offset: number): Path {
+/** The innermost value around an offset, and its path. */
+function around(document: Document, offset: number): { path: Path; node: unknown } {
   const path: (string | number)[] = [];
-  let at: unknown = document.contents;
-  for (;;) {
-    if (isMap(at)) {
-      const pair = at.items.findLast((candidate) => (startOf(candidate.key) ?? Infinity) <= offset);
-      if (!pair) return path;
+  const endsBefore = (node: unknown) => !isNode(node) || node.range == null || node.range[1] < offset;
+  let node: unknown = document.contents;
+  while (!endsBefore(node)) {
+    if (isMap(node)) {
+      const pair = node.items.findLast((candidate) => (startOf(candidate.key) ?? Infinity) <= offset);
+      if (!pair || (endsBefore(pair.key) && endsBefore(pair.value))) break;
       path.push(keyOf(pair));
-      at = pair.value;
-    } else if (isSeq(at)) {
-      const index = at.items.findLastIndex((item) => (startOf(item) ?? Infinity) <= offset);
-      if (index < 0) return path;
+      node = endsBefore(pair.value) ? pair.key : pair.value;
+    } else if (isSeq(node)) {
+      const index = node.items.findLastIndex((item) => (startOf(item) ?? Infinity) <= offset && !endsBefore(item));
+      if (index < 0) break;
       path.push(index);
-      at = at.items[index];
-    } else return path;
+      node = node.items[index];
+    } else break;
   }
+  return { path, node };
 }
