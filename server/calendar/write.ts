@@ -38,12 +38,19 @@ const STATUS = {
 /** The VTIMEZONE of a zone, or null where the list does not know it: then times are written in UTC. */
 function vtimezone(zone: string): string | null {
   const [block] = [timezoneBlock(zone)].flat();
-  return block?.startsWith('BEGIN:VTIMEZONE') ? block.trim() : null;
+  // Of a zone that is another's twin the list gives the twin's name.
+  return block?.startsWith('BEGIN:VTIMEZONE') ? block.trim().replace(/^TZID:.*$/m, `TZID:${zone}`) : null;
+}
+
+/** Whether the clock of the zone shows that time twice. Readers differ in which one they take, whatever RFC 5545 (3.3.5) says. */
+function isRepeated(wall: WallTime, zone: string): boolean {
+  const time = Temporal.PlainDateTime.from(wall);
+  return !time.toZonedDateTime(zone, { disambiguation: 'earlier' }).equals(time.toZonedDateTime(zone, { disambiguation: 'later' }));
 }
 
 /**
  * Writes a calendar by RFC 5545 and 7986: a plain snapshot without METHOD, local times with the zone's rules, cancelled calls kept.
- * A time that the clock shows twice is the first one (RFC 5545, 3.3.5), as everywhere in the plan.
+ * A time that the clock shows twice is the first one (RFC 5545, 3.3.5), as everywhere in the plan, and written in UTC.
  */
 export function writeCalendar(feed: CalendarFeed): string {
   const block = vtimezone(feed.timezone);
@@ -64,7 +71,7 @@ export function writeCalendar(feed: CalendarFeed): string {
       lastModified: event.changedAt,
       start: instant(event.from),
       end: instant(event.to),
-      timezone: block === null ? null : feed.timezone,
+      timezone: block === null || [event.from, event.to].some((wall) => isRepeated(wall, feed.timezone)) ? null : feed.timezone,
       summary: event.summary,
       location: event.location,
       description: event.description,
