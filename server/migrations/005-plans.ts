@@ -13,6 +13,7 @@ create table plans (
   cost double precision,
   bound double precision,
   outcome json not null,
+  file json not null,
   created_by uuid not null references users,
   created_at timestamptz not null default now(),
   unique (production_id, id),
@@ -37,14 +38,13 @@ create table versions (
   unique (plan_id)
 );
 
--- One uid per person, date and ordinal through all versions; the sequence grows when times or status change.
+-- One uid per person and date through all versions; the sequence grows when times or status change.
 create table calls (
   id uuid primary key default gen_random_uuid(),
   production_id uuid not null references productions on delete cascade,
   ${ref('version_id', 'versions', 'not null', 'cascade')},
   ${ref('person_id', 'people', 'not null')},
   date wall_date not null,
-  ordinal integer not null check (ordinal >= 0),
   arrive wall_time not null,
   ready wall_time not null,
   release wall_time not null,
@@ -55,7 +55,7 @@ create table calls (
   status text not null check (status in ('called', 'cancelled')),
   changed_at timestamptz not null,
   unique (production_id, id),
-  unique (version_id, person_id, date, ordinal),
+  unique (version_id, person_id, date),
   unique (version_id, uid),
   check (arrive <= ready)
 );

@@ -23,6 +23,8 @@ export interface PlanModel extends Model<InferAttributes<PlanModel>, InferCreati
   cost: number | null;
   bound: number | null;
   outcome: PlanOutcome;
+  /** The production of that revision, which the plan was made for and is printed with. */
+  file: ProductionFile;
   createdBy: string;
   createdAt: CreationOptional<Date>;
 }
@@ -49,8 +51,6 @@ export interface CallModel extends Model<InferAttributes<CallModel>, InferCreati
   versionId: string;
   personId: string;
   date: string;
-  /** 0, or more where a person has several calls on one date. */
-  ordinal: number;
   arrive: string;
   ready: string;
   release: string;
@@ -87,6 +87,7 @@ export function planModels(sequelize: Sequelize) {
         cost: maybeNumber,
         bound: maybeNumber,
         outcome: json,
+        file: json,
         createdBy: uuid,
         createdAt,
       }),
@@ -117,7 +118,6 @@ export function planModels(sequelize: Sequelize) {
         versionId: uuid,
         personId: uuid,
         date: words,
-        ordinal: whole,
         arrive: words,
         ready: words,
         release: words,

@@ -3,6 +3,8 @@ import type { Routes } from '../http/routes';
 import { accountRoutes } from './account/routes';
 import { changeRoutes } from './changes/routes';
 import { healthRoutes } from './health/routes';
+import { memberRoutes } from './members/routes';
+import { planRoutes } from './plans/routes';
 import { productionRoutes } from './productions/routes';
 import { sessionRoutes } from './session/routes';
 import { startingPointRoutes } from './starting-points/routes';
@@ -15,4 +17,6 @@ export const resources: readonly ((routes: Routes, context: Context) => void)[] 
   startingPointRoutes,
   productionRoutes,
   changeRoutes,
+  planRoutes,
+  memberRoutes,
 ];

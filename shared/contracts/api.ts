@@ -149,3 +149,24 @@ export const link = z.object({
 export type Link = z.infer<typeof link>;
 export const newLink = link.extend({ address: z.string() });
 export type NewLink = z.infer<typeof newLink>;
+
+/** Somebody is added by e-mail: a member at once where they have an account, else invited by an address to hand on. `person`: who of the people they are. */
+export const memberRequest = z.object({ email, role, person: z.string().max(64).optional() });
+export const memberUpdate = z.object({ role: role.optional(), person: z.string().max(64).nullable().optional() });
+export const member = z.object({
+  id: z.uuid(),
+  /** Null where they have not taken up their invitation. */
+  name: z.string().nullable(),
+  email: z.string().nullable(),
+  role,
+  person: z.string().nullable(),
+  /** An invitation that waits. */
+  invited: z.boolean(),
+  /** Whether this is who asks. */
+  self: z.boolean(),
+});
+export type Member = z.infer<typeof member>;
+/** `address` is there once, for an invitation: only its hash is kept. */
+export const newMember = member.extend({ address: z.string().nullable() });
+export type NewMember = z.infer<typeof newMember>;
+export const invitationRequest = z.object({ token: z.string().min(20).max(100) });

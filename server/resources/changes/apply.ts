@@ -43,8 +43,7 @@ export class Batch {
       throw new Refusal('conflict', `There is already ${wordsFor(resource, key)}. Choose another id, or change the one that is there.`);
     if (!known && resource === 'production') throw new Refusal('wrong-fields', `The key of the production is "${HEAD}".`);
     this.demandSong(resource, key);
-    const { position: _position, ...sent } = change.fields;
-    const fields = checkedFields(resource, key, sent);
+    const fields = checkedFields(resource, key, { ...change.fields, position: null });
     const before = known && resource !== 'production' ? known.fields : null;
     const row: KnownRow = known ?? { id: randomUUID(), resource, key, revision: 0, position: 0, removed: false, fields };
     row.fields = fields;

@@ -28,6 +28,11 @@ function unknownFields(sent: unknown, read: unknown, path: string): Fault[] {
   });
 }
 
+const unknownNames = (resource: ResourceName, fields: RowFields, path: string): Fault[] =>
+  Object.keys(fields)
+    .filter((name) => !(name in rowSchemas[resource].shape))
+    .map((name) => ({ path: `${path}.${name}`, expected: 'a field that is known here' }));
+
 /**
  * The fields of a row, whole and checked by its schema; `null` clears a field, and the identity comes from the key. A Refusal names
  * every fault.
@@ -42,6 +47,7 @@ export function checkedFields(resource: ResourceName, key: string, fields: RowFi
   const faults: Fault[] = [
     ...strange.map(([name, value]) => ({ path: `${path}.${name}`, expected: `${String(value)}, as its key says; an id is not changed` })),
     ...(parsed.success ? unknownFields(whole, parsed.data, path) : faultsOf(parsed.error, path)),
+    ...(parsed.success ? [] : unknownNames(resource, whole, path)),
     ...(JSON.stringify(given.extra ?? null).length > MOST_EXTRA ? [{ path: `${path}.extra`, expected: 'fewer unknown fields' }] : []),
   ];
   if (faults.length > 0 || !parsed.success) throw wrongFields(faults);
