@@ -22,6 +22,15 @@ export const eventName = (event: SessionEvent): string => event.name ?? event.ki
 
 const isLive = (part: Part): boolean => part.mode === 'live' || part.mode === 'guide';
 
+/** What a name says beyond the song's title: `Weir Song horns` → `horns`; the title alone, or its basics, stay the title. */
+function beyondTitle(name: string, title: string | null): string {
+  if (title === null || !name.toLowerCase().startsWith(title.toLowerCase())) return name;
+  const beyond = name.slice(title.length);
+  if (/^[\p{L}\p{N}]/u.test(beyond)) return name;
+  const rest = beyond.replace(/^[\s:,–-]+/, '');
+  return rest === '' || rest.toLowerCase() === 'basics' ? title : rest;
+}
+
 /** The name of a pass: its own, else the song's title for the parts that are played together, else the added parts. */
 export function passName(file: Pick<ProductionFile, 'songs'>, pass: Pass): PassName {
   const song = pass.song === undefined ? undefined : file.songs.find(({ id }) => id === pass.song);
@@ -29,7 +38,8 @@ export function passName(file: Pick<ProductionFile, 'songs'>, pass: Pass): PassN
   const title = song ? (song.title ?? song.code ?? asWords(song.id)) : null;
   const parts = partsOf(pass, song);
   const added = parts.length > 0 && !parts.some(isLive) ? parts.map(partName).join(', ') : null;
-  const label = pass.name ?? added ?? title ?? asWords(pass.id);
+  const own = pass.name === undefined ? undefined : beyondTitle(pass.name, title);
+  const label = own ?? added ?? title ?? asWords(pass.id);
   return { code, label, full: title === null || label === title ? label : `${title}, ${label}` };
 }
 

@@ -2,9 +2,10 @@ import type { ProductionFile } from '../contracts/resources';
 import type { ItemKind, PlanCall, PlanItem } from '../contracts/plan';
 import type { Minute, Minutes, PersonId, RoomId, WallDate } from '../domain/flavours';
 import { eventName, passName } from '../domain/passes';
-import { namesOf, type Names } from '../domain/sheets/names';
+import { namesOf } from '../domain/sheets/names';
 import { clock, dayWords } from '../time/words';
 import { zoneClock, type ZoneClock } from '../time/wall';
+import { type DayRoom, isBeforehand, minuteOf, notesOf, type Reading, roomsOf, type Window } from './dayNotes';
 import { staysOf, type Stay, type TimedItem } from './threads';
 
 /** One item of a day as it is drawn and read out. */
@@ -38,18 +39,6 @@ export interface DayThread {
   stays: Stay[];
 }
 
-export interface DayRoom {
-  id: RoomId;
-  name: string;
-  /** When it is open that day, `10:00–20:00`. */
-  open: string;
-  closes: Minute;
-  /** When loud work has to end, where that is before the room closes. */
-  loudUntil: string | null;
-  /** Whether the plan uses it that day. */
-  used: boolean;
-}
-
 export interface PlanDay {
   date: WallDate;
   title: string;
@@ -72,29 +61,6 @@ const HOUR: Minutes = 60;
 const MARGIN: Minutes = 60;
 /** What a day without hours and items would show. */
 const DEFAULT_SPAN: Minutes = 600;
-
-/** What every part of a day is read with. */
-interface Reading {
-  file: ProductionFile;
-  zone: ZoneClock;
-  names: Names;
-  windows: Window[];
-}
-
-interface Window {
-  room: RoomId;
-  from: Minute;
-  to: Minute;
-  date: WallDate;
-}
-
-/** A time that no clock shows is drawn where the clock goes on. */
-function minuteOf(zone: ZoneClock, wall: string): Minute {
-  const minute = zone.minuteOf(wall);
-  if (minute !== 'gap') return minute;
-  const hour = Number(wall.slice(11, 13));
-  return minuteOf(zone, `${wall.slice(0, 11)}${String(Math.min(23, hour + 1)).padStart(2, '0')}:00`);
-}
 
 /**
  * A plan, day by day: every date on which a room is open or something happens, in order, with its items, people and hours.
@@ -147,12 +113,13 @@ export function planDays(file: ProductionFile, plan: { items: readonly PlanItem[
 }
 
 /** The stretch of a date worth drawing, from a full hour; `start` counts from the date's midnight. */
-function spanOf(date: WallDate, items: TimedItem[], windows: Window[], zone: ZoneClock): { midnight: Minute; start: Minutes; to: Minute } {
+function spanOf(date: WallDate, all: TimedItem[], windows: Window[], zone: ZoneClock): { midnight: Minute; start: Minutes; to: Minute } {
   const midnight = minuteOf(zone, `${date}T00:00`);
   const open = windows.filter((window) => window.date === date);
+  const opens = Math.min(...open.map(({ from }) => from));
+  const items = all.filter((item) => !isBeforehand(item, opens));
   const first = Math.min(...items.map(({ from }) => from));
   const last = Math.max(...items.map(({ to }) => to));
-  const opens = Math.min(...open.map(({ from }) => from));
   const closes = Math.max(...open.map(({ to }) => to));
   const from = items.length > 0 ? Math.min(first, Math.max(opens, first - MARGIN)) : opens;
   const until = items.length > 0 ? Math.max(last, Math.min(closes, last + MARGIN)) : closes;
@@ -216,49 +183,6 @@ function nameOf(item: TimedItem, { file, names }: Reading): Pick<DayItem, 'code'
     case 'wrap':
       return plain('Wrap: names, copies');
   }
-}
-
-function roomsOf(date: WallDate, items: TimedItem[], { file, zone, windows }: Reading): DayRoom[] {
-  return file.rooms.flatMap((room) => {
-    const open = windows.filter((window) => window.room === room.id && window.date === date);
-    if (open.length === 0) return [];
-    const closes = Math.max(...open.map(({ to }) => to));
-    const loud = (room.loud ?? [])
-      .map((hours) => minuteOf(zone, hours.to))
-      .filter((until) => open.some(({ from, to }) => from < until && until < to));
-    return [
-      {
-        id: room.id,
-        name: room.name ?? room.id,
-        open: open.map(({ from, to }) => `${clock(zone.wallOf(from))}–${clock(zone.wallOf(to))}`).join(', '),
-        closes,
-        loudUntil: loud.length > 0 ? clock(zone.wallOf(Math.max(...loud))) : null,
-        used: items.some((item) => item.room === room.id && item.kind !== 'event'),
-      },
-    ];
-  });
-}
-
-/** Who is called that day and cannot be there for all of the hours in which the rooms they work in are open. */
-function notesOf(date: WallDate, items: TimedItem[], { file, zone, names, windows }: Reading): string[] {
-  const called = new Set(items.filter(({ kind }) => kind === 'pass').flatMap(({ people }) => people));
-  const rooms = new Set(items.filter(({ kind }) => kind === 'pass').map(({ room }) => room));
-  const open = windows.filter((window) => window.date === date && rooms.has(window.room));
-  const opens = Math.min(...open.map(({ from }) => from));
-  const closes = Math.max(...open.map(({ to }) => to));
-  return file.people.flatMap((person) => {
-    if (!person.windows || !called.has(person.id)) return [];
-    const mine = person.windows
-      .map(({ from, to }) => ({ from: minuteOf(zone, from), to: minuteOf(zone, to) }))
-      .filter(({ from, to }) => from < closes && opens < to);
-    if (mine.length === 0) return [];
-    const comes = Math.min(...mine.map(({ from }) => from));
-    const leaves = Math.max(...mine.map(({ to }) => to));
-    return [
-      ...(comes > opens ? [`${names.short(person.id)} from ${clock(zone.wallOf(comes))}`] : []),
-      ...(leaves < closes ? [`${names.short(person.id)} leaves ${clock(zone.wallOf(leaves))}`] : []),
-    ];
-  });
 }
 
 function threadsOf(date: WallDate, items: TimedItem[], calls: readonly PlanCall[], { file, zone, names }: Reading): DayThread[] {

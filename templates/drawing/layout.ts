@@ -80,7 +80,9 @@ const SCALE = 0.92;
 const MOST_SCALE = 1.5;
 const CLOCK_COLUMN = 48;
 const LANE_GAP = 10;
-const LEAST_LANE = 104;
+const LEAST_LANE = 100;
+/** Blocks are given this much before the threads are set further apart than they must. */
+const GOOD_LANE = 170;
 const PITCH = { most: 20, least: 13 };
 /** With more people than this, only those who are called are drawn. */
 const ALL_NAMED = 14;
@@ -97,12 +99,13 @@ export function minuteHeight(day: Pick<PlanDay, 'shortest'>, mode: DrawingMode):
 const drawn = (day: PlanDay): PlanDay['threads'] =>
   day.threads.length <= ALL_NAMED ? day.threads : day.threads.filter(({ stays }) => stays.length > 0);
 
-/** Rooms that get a column: those in which something happens, or all of an empty day; a last one for what happens in no room. */
-function columns(day: PlanDay): { room: string | null; title: string }[] {
-  const busy = day.rooms.filter(({ id, used }) => used || day.items.some(({ room }) => room === id));
+/** Rooms that get a column: those in which something is drawn, or the first of an empty day; a last one for what happens in no room. */
+export function columns(day: PlanDay): { room: string | null; title: string }[] {
+  const items = day.items.filter(({ to }) => to > day.from);
+  const busy = day.rooms.filter(({ id }) => items.some(({ room }) => room === id));
   const rooms = (busy.length > 0 ? busy : day.rooms.slice(0, 1)).map(({ id, name }) => ({ room: id as string | null, title: name }));
   const known = new Set(rooms.map(({ room }) => room));
-  const astray = day.items.some(({ room }) => room === null || !known.has(room));
+  const astray = items.some(({ room }) => room === null || !known.has(room));
   return astray ? [...rooms, { room: null, title: 'Elsewhere' }] : rooms;
 }
 
@@ -126,7 +129,7 @@ function threadRoom(day: PlanDay, mode: DrawingMode, width: number): ThreadRoom 
   const threads = drawn(day);
   const lanes = columns(day).length;
   const size = TYPE[mode].name;
-  const free = width - CLOCK_COLUMN - EDGE - lanes * (LEAST_LANE + 30 + LANE_GAP);
+  const free = width - CLOCK_COLUMN - EDGE - lanes * (GOOD_LANE + LANE_GAP);
   const pitch = Math.min(PITCH.most, Math.max(PITCH.least, Math.floor(free / Math.max(1, threads.length))));
   const turn = Math.asin(Math.min(1, (size * 0.9) / pitch));
   const names = threads.map(({ short }) => fitText(short, NAME_MOST, size));
@@ -166,7 +169,7 @@ export function layoutDay(day: PlanDay, { mode, width }: DrawingOptions): DayDra
     return index < 0 ? cols.length - 1 : index;
   };
   const blocks = day.items
-    .filter(({ from, to }) => from < to)
+    .filter(({ from, to }) => from < to && to > day.from)
     .map((item): Block => {
       const lane = lanes[laneOf(item)]!;
       const rect = { x: lane.x, y: y(item.from), width: lane.width, height: Math.max(2, (item.to - item.from) * scale - 1.5) };

@@ -81,6 +81,9 @@ describe('writing passes out', () => {
       );
     expect(name('s1-basics')).toEqual({ code: 'S1', label: 'Weir Song', full: 'Weir Song' });
     expect(name('s1-horns')).toEqual({ code: 'S1', label: 'horns', full: 'Weir Song, horns' });
+    const named = { ...file.passes![0]!, name: 'Weir Song: organ and horns' };
+    expect(passName(file, named)).toEqual({ code: 'S1', label: 'organ and horns', full: 'Weir Song, organ and horns' });
+    expect(passName(file, { ...named, name: 'Weir Song basics' }).label).toBe('Weir Song');
     expect(name('s3-solo')).toEqual({ code: 'S3', label: 'trumpet solo', full: 'Half a Ferry, trumpet solo' });
   });
 });

@@ -62,7 +62,20 @@ describe('the days of a plan', () => {
       ['Room A', true],
       ['Room B', true],
     ]);
-    expect(tuesday!.notes).toEqual(['Lys from 13:00', 'Lys leaves 17:00']);
+    expect(tuesday!.notes).toEqual(['Lys 13:00–17:00']);
+  });
+
+  it('says beside the day what is over before the rooms open, and draws the day from then on', () => {
+    const file = sampleFile();
+    file.events = [{ id: 'tuner', name: 'piano tuner', kind: 'tuner', room: 'a', from: '2027-03-08T08:00', to: '2027-03-08T09:30' }];
+    const plan = samplePlan();
+    plan.items = [{ kind: 'event', id: 'tuner', room: 'a', start: '2027-03-08T08:00', end: '2027-03-08T09:30', people: [] }, ...plan.items];
+    const [monday] = planDays(file, plan);
+    expect(monday!.notes).toEqual(['piano tuner 08:00–09:30']);
+    expect(monday!.hours[0]!.label).toBe('10:00');
+    // Somebody who is called for it makes it part of the day.
+    plan.items[0]!.people = ['petra'];
+    expect(planDays(file, plan)[0]!.hours[0]!.label).toBe('08:00');
   });
 
   it('shows the same stretch of the clock on every day', () => {

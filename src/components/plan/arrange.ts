@@ -1,5 +1,5 @@
 import type { PlanDay } from '../../../shared/planner/day';
-import { leastWidth } from '../../../templates/drawing/layout';
+import { columns, leastWidth } from '../../../templates/drawing/layout';
 
 /** A day with the width it is drawn at. */
 export interface ArrangedDay {
@@ -9,18 +9,17 @@ export interface ArrangedDay {
 
 export const DAY_GAP = 22;
 /** What a day needs beyond the least, to be read with ease. */
-const EASE = 28;
+const EASE = 18;
 const MOST = { firstRoom: 440, room: 150 };
 /** A day without work is only words. */
 const EMPTY = 150;
 
-const roomsUsed = (day: PlanDay): number => Math.max(1, day.rooms.filter(({ used }) => used).length);
 export const isEmpty = (day: PlanDay): boolean => day.items.length === 0;
 
 function wanted(day: PlanDay, width: number): { least: number; most: number } {
   if (isEmpty(day)) return { least: EMPTY, most: EMPTY };
   const least = Math.min(width, leastWidth(day, 'screen') + EASE);
-  return { least, most: Math.max(least, MOST.firstRoom + (roomsUsed(day) - 1) * MOST.room) };
+  return { least, most: Math.max(least, MOST.firstRoom + (columns(day).length - 1) * MOST.room) };
 }
 
 /** Sets days side by side in rows of a width, in order: as many to a row as can be read, the room left over shared among them. */
