@@ -20,8 +20,8 @@ function bare(schema: z.ZodType): z.ZodType {
 }
 
 /**
- * Parts what a schema knows from what it does not, at every depth. The copy in `known` is fit for the strictest reading of the schema;
- * paths of `unknown` are relative to `value`. `extra`, in which unknown fields are kept, is itself no field of a file.
+ * Parts what a schema knows from what it does not, at every depth. The copy in `known` is fit for the strictest reading of the schema and
+ * has its fields in the schema's order; paths of `unknown` are relative to `value`. `extra`, in which unknown fields are kept, is itself no field of a file.
  */
 export function separate(schema: z.ZodType, value: unknown, path: Path = []): { known: unknown; unknown: UnknownField[] } {
   const wanted = bare(schema);
@@ -33,15 +33,13 @@ export function separate(schema: z.ZodType, value: unknown, path: Path = []): { 
   if (!shape || !isFields(value)) return { known: value, unknown: [] };
   const known: Fields = {};
   const unknown: UnknownField[] = [];
-  for (const [key, field] of Object.entries(value)) {
-    const fieldSchema = Object.hasOwn(shape, key) && key !== 'extra' ? shape[key] : undefined;
-    if (!fieldSchema) {
-      unknown.push({ path: [...path, key], value: field });
-      continue;
-    }
-    const inner = separate(fieldSchema, field, [...path, key]);
+  const isKnown = (key: string) => Object.hasOwn(shape, key) && key !== 'extra';
+  for (const [key, fieldSchema] of Object.entries(shape)) {
+    if (!isKnown(key) || !Object.hasOwn(value, key)) continue;
+    const inner = separate(fieldSchema, value[key], [...path, key]);
     setOwn(known, key, inner.known);
     unknown.push(...inner.unknown);
   }
+  for (const [key, field] of Object.entries(value)) if (!isKnown(key)) unknown.push({ path: [...path, key], value: field });
   return { known, unknown };
 }

@@ -1,6 +1,8 @@
 import { Document, isCollection, isMap, isScalar, isSeq, Scalar, visit } from 'yaml';
-import type { ExtraField, ProductionFile } from '../contracts/resources';
+import type { z } from 'zod';
+import * as resources from '../contracts/resources';
 import { type Fields, isFields, type Path, setOwn } from './paths';
+import { separate } from './unknown';
 
 /** A line is read at a glance up to here; what is longer is written over several. */
 const LINE = 110;
@@ -11,7 +13,7 @@ const UNSAFE_PLAIN = /[\r\u0085\u2028\u2029\uFEFF]/;
  * Writes a production as a production file: short things on one line, unknown fields back at their place. Reading what is written
  * gives the same production.
  */
-export function writeProductionFile(file: ProductionFile): string {
+export function writeProductionFile(file: resources.ProductionFile): string {
   const document = new Document(fieldsOf(file), { version: '1.2', schema: 'core', merge: false, aliasDuplicateObjects: false });
   visit(document, {
     Scalar: (_, node) => {
@@ -29,38 +31,53 @@ export function writeProductionFile(file: ProductionFile): string {
 }
 
 /** The production in the order and shape of the file. */
-function fieldsOf(file: ProductionFile): Fields {
+function fieldsOf(file: resources.ProductionFile): Fields {
   const { rules, weights, extra, ...production } = file.production;
-  const root: Fields = { redpoll: 1, production };
-  if (rules) root.rules = rules;
-  if (weights) root.weights = weights;
-  root.rooms = file.rooms.map(withExtra);
-  if (file.people.length > 0) root.people = file.people.map(withExtra);
-  if (file.gear.length > 0) root.gear = file.gear.map(withExtra);
-  if (file.setups.length > 0) root.setups = file.setups.map(withExtra);
-  if (file.changeovers.length > 0) root.changeovers = file.changeovers.map(withExtra);
-  if (file.songs.length > 0)
-    root.songs = file.songs.map((song) => withExtra({ ...song, ...(song.parts ? { parts: song.parts.map(withExtra) } : {}) }));
-  if (file.passes) root.passes = file.passes.map(withExtra);
-  if (file.events.length > 0) root.events = file.events.map(withExtra);
+  const root: Fields = { redpoll: 1, production: inOrder(resources.production, production) };
+  if (rules) root.rules = inOrder(resources.rules, rules);
+  if (weights) root.weights = inOrder(resources.weights, weights);
+  const list = (name: string, items: Kept[], schema: z.ZodType) => {
+    if (items.length > 0) root[name] = items.map((item) => written(schema, item));
+  };
+  root.rooms = [];
+  list('rooms', file.rooms, resources.room);
+  list('people', file.people, resources.person);
+  list('gear', file.gear, resources.gear);
+  list('setups', file.setups, resources.setup);
+  list('changeovers', file.changeovers, resources.changeover);
+  if (file.songs.length > 0) root.songs = file.songs.map(songFields);
+  if (file.passes) root.passes = [];
+  list('passes', file.passes ?? [], resources.pass);
+  list('events', file.events, resources.event);
   return restored(root, extra);
 }
 
-function withExtra<Resource extends { extra?: ExtraField[] }>(resource: Resource): Fields {
+/** A resource with the unknown fields it came with. */
+type Kept = { extra?: resources.ExtraField[] };
+
+/** Fields in the order of the format, whatever order a database kept them in. */
+const inOrder = (schema: z.ZodType, fields: object): unknown => separate(schema, fields).known;
+
+function written(schema: z.ZodType, resource: Kept): Fields {
   const { extra, ...fields } = resource;
-  return restored(fields, extra);
+  return restored(inOrder(schema, fields) as Fields, extra);
+}
+
+function songFields(song: resources.Song): Fields {
+  const { parts, ...head } = song;
+  const fields = written(resources.song, head);
+  if (parts) fields.parts = parts.map((part) => written(resources.part, part));
+  return fields;
 }
 
 /** Puts unknown fields back. One whose surroundings are gone has nowhere to stand. */
-function restored(fields: Fields, extra: ExtraField[] | undefined): Fields {
-  if (!extra || extra.length === 0) return fields;
-  const copy = structuredCopy(fields);
+function restored(fields: Fields, extra: resources.ExtraField[] = []): Fields {
   for (const { path, value } of extra) {
     const key = path.at(-1);
-    const owner = ownerAt(copy, path.slice(0, -1));
+    const owner = ownerAt(fields, path.slice(0, -1));
     if (owner && typeof key === 'string' && !Object.hasOwn(owner, key)) setOwn(owner, key, value);
   }
-  return copy as Fields;
+  return fields;
 }
 
 function ownerAt(root: unknown, path: Path): Fields | undefined {
@@ -70,14 +87,6 @@ function ownerAt(root: unknown, path: Path): Fields | undefined {
     else at = isFields(at) && Object.hasOwn(at, step) ? at[step] : undefined;
   }
   return isFields(at) ? at : undefined;
-}
-
-function structuredCopy(value: unknown): unknown {
-  if (Array.isArray(value)) return value.map(structuredCopy);
-  if (!isFields(value)) return value;
-  const copy: Fields = {};
-  for (const [key, field] of Object.entries(value)) setOwn(copy, key, structuredCopy(field));
-  return copy;
 }
 
 /** Writes a list or mapping on one line where it fits, else one item a line. Answers its width on one line. */
