@@ -1,0 +1,136 @@
+import type { Pass } from '../../contracts/resources';
+import type { Minute, Minutes, PersonId } from '../../domain/flavours';
+import { leastEntry } from './days';
+import { usedBy, type Place } from './places';
+import type { Edge, Pair } from './statement';
+import { castOf, edgesThatHold, fieldOf, minutesOf, pairsThatHold, roomIdOf, roundUp, ruleOf, type View } from './view';
+
+/** How two passes bind each other. */
+export interface Couple {
+  one: Pass;
+  other: Pass;
+  together: boolean;
+  /** Whether they may run at the same time. */
+  meet: boolean;
+  /** Least minutes from the end of the first to the start of the second, by who is first; null = may not be in that order. */
+  oneFirst: Gap | null;
+  otherFirst: Gap | null;
+  /** People of both. */
+  shared: PersonId[];
+}
+interface Gap {
+  least: Minutes;
+  /** Whether the first must be listened to before the second. */
+  approved: boolean;
+}
+
+/** @returns null where the two do not bind each other at all */
+export function coupleOf(view: View, one: Pass, other: Pass): Couple | null {
+  const { statement } = view;
+  const between = (pair: Pair) => pair.one !== pair.other && [pair.one, pair.other].includes(other.id);
+  const forward = edgesThatHold(
+    view,
+    (statement.edgesFrom.get(one.id) ?? []).filter((edge) => edge.to === other.id),
+  );
+  const backward = edgesThatHold(
+    view,
+    (statement.edgesFrom.get(other.id) ?? []).filter((edge) => edge.to === one.id),
+  );
+  const together = pairsThatHold(view, (statement.togetherWith.get(one.id) ?? []).filter(between)).length > 0;
+  const theirs = new Set(castOf(statement, other));
+  const shared = castOf(statement, one).filter((person) => theirs.has(person));
+  const meet =
+    shared.length === 0 &&
+    roomIdOf(statement, one) !== roomIdOf(statement, other) &&
+    !oneSongInTwoRooms(view, one, other) &&
+    !spoils(view, one, other) &&
+    !spoils(view, other, one) &&
+    !lackGear(view, one, other) &&
+    pairsThatHold(view, (statement.apartFrom.get(one.id) ?? []).filter(between)).length === 0;
+  if (meet && !together && forward.length === 0 && backward.length === 0) return null;
+  return {
+    one,
+    other,
+    together,
+    meet,
+    oneFirst: backward.length > 0 ? null : gapOf(view, one, other, forward),
+    otherFirst: forward.length > 0 ? null : gapOf(view, other, one, backward),
+    shared,
+  };
+}
+
+function gapOf(view: View, first: Pass, second: Pass, edges: readonly Edge[]): Gap {
+  const lag = edges.reduce((most, edge) => Math.max(most, edge.lag), 0);
+  const approved = edges.some((edge) => edge.approved);
+  const sameRoom = roomIdOf(view.statement, first) === roomIdOf(view.statement, second);
+  const differ = first.setup !== undefined && second.setup !== undefined && first.setup !== second.setup;
+  if (!sameRoom || !differ || !fieldOf(view, first, 'setup')) return { least: lag, approved };
+  const setup = fieldOf(view, second, 'setup');
+  return { least: setup === undefined ? lag : Math.max(lag, leastEntry(view, setup)), approved };
+}
+
+function oneSongInTwoRooms(view: View, one: Pass, other: Pass): boolean {
+  return one.song !== undefined && one.song === other.song && ruleOf(view, 'oneRoomPerSong');
+}
+
+/** Whether the loud one spoils the quiet one, in rooms that hear each other. */
+function spoils(view: View, loud: Pass, quiet: Pass): boolean {
+  if (loud.loud !== true || quiet.quiet !== true) return false;
+  const { statement } = view;
+  const here = statement.rooms.get(roomIdOf(statement, loud) ?? '')?.room;
+  const there = statement.rooms.get(roomIdOf(statement, quiet) ?? '')?.room;
+  const hears = here && there && (here.hears?.includes(there.id) || there.hears?.includes(here.id));
+  return hears === true && fieldOf(view, loud, 'loud') === true && fieldOf(view, quiet, 'quiet') === true;
+}
+
+function lackGear(view: View, one: Pass, other: Pass): boolean {
+  return (one.uses ?? []).some(({ gear }) => {
+    const facts = view.statement.gear.get(gear);
+    const wanted = usedBy(one, gear) + usedBy(other, gear);
+    if (!facts || usedBy(other, gear) === 0 || wanted <= (facts.gear.count ?? 1)) return false;
+    return view.has(`gear.${gear}.count`) && fieldOf(view, one, 'uses') !== undefined && fieldOf(view, other, 'uses') !== undefined;
+  });
+}
+
+/** The first minute at which what ended at a minute can have been listened to. Events of kind listen are never dropped: they only help. */
+export function heardBy(view: View, ended: Minute): Minute {
+  const { statement } = view;
+  const events = [...statement.events.values()].filter(({ event, from }) => event.kind === 'listen' && from >= ended).map(({ to }) => to);
+  const item = statement.rules.listen > 0 || !view.has('rules.listen') ? [ended + roundUp(view, ruleOf(view, 'listen'))] : [];
+  return Math.min(Infinity, ...events, ...item);
+}
+
+/** Whether the couple fits with one of them in each of these places. */
+export function fits(view: View, couple: Couple, here: Place, there: Place): boolean {
+  const { one, other, together, meet } = couple;
+  const unordered = couple.oneFirst !== null && couple.otherFirst !== null;
+  if (together) return meet && unordered && Math.max(here.from, there.from) <= Math.min(here.to, there.to);
+  if (unordered && meet) return true;
+  return (
+    (couple.oneFirst !== null && inOrder(view, couple, couple.oneFirst, [one, here], [other, there])) ||
+    (couple.otherFirst !== null && inOrder(view, couple, couple.otherFirst, [other, there], [one, here]))
+  );
+}
+
+function inOrder(view: View, couple: Couple, gap: Gap, [first, here]: [Pass, Place], [second, there]: [Pass, Place]): boolean {
+  const ended = here.from + minutesOf(view, first);
+  const least = gap.approved ? Math.max(heardBy(view, ended), ended + gap.least) : ended + gap.least;
+  if (least > there.to) return false;
+  if (here.date === null || there.date === null) return true;
+  const sameDate = here.date === there.date;
+  return couple.shared.every((person) =>
+    sameDate ? inOneDay(view, person, [first, here], [second, there]) : there.to - ended >= ruleOf(view, 'turnaround'),
+  );
+}
+
+/** Whether a person can have both on one date: within their longest day and, without time off between, within one of their windows. */
+function inOneDay(view: View, person: PersonId, [first, here]: [Pass, Place], [second, there]: [Pass, Place]): boolean {
+  const facts = view.statement.people.get(person)!;
+  const { limits, away } = facts.person;
+  const length = Math.max(minutesOf(view, first) + minutesOf(view, second), there.from + minutesOf(view, second) - here.to);
+  if (limits?.day !== undefined && length > limits.day && view.has(`people.${person}.limits`)) return false;
+  if (!facts.windows || away !== undefined || !view.has(`people.${person}.windows`)) return true;
+  return facts.windows.some(
+    (window) => window.from <= here.from && here.to < window.to && window.from <= there.from && there.to < window.to,
+  );
+}

@@ -1,0 +1,91 @@
+import type { Pass } from '../../../contracts/resources';
+import type { Minutes, PersonId, WallDate } from '../../../domain/flavours';
+import { merged, type Span } from '../../model';
+import type { NecessaryCondition } from '../condition';
+import { placesOf, type Place } from '../places';
+import { common, total, without } from '../spans';
+import { castOf, eventsThatHold, fieldOf, minutesOf, neededPasses, roomIdOf, ruleOf, type View } from '../view';
+import { personWords } from '../words';
+import { dayWords, length } from '../../../time/words';
+
+/**
+ * What a person must do on some dates fits into their windows, their longest day with its meals, and their voice. Asked of every run of
+ * dates, short runs first.
+ */
+export const personMinutes: NecessaryCondition = {
+  name: 'person minutes',
+  subjects({ statement }) {
+    const dates = datesOf(statement.rooms.values());
+    const runs = dates.flatMap((_, first) => dates.slice(first).map((__, more) => ({ first, last: first + more })));
+    runs.sort((one, other) => one.last - one.first - (other.last - other.first));
+    return runs.flatMap(({ first, last }) => [...statement.people.keys()].map((person) => `${person} ${dates[first]} ${dates[last]}`));
+  },
+  fails(view, subject) {
+    const [person = '', first = '', last = ''] = subject.split(' ');
+    const within = ({ date }: Place) => date !== null && first <= date && date <= last;
+    const passes = neededPasses(view).filter((pass) => {
+      if (!castOf(view.statement, pass).includes(person)) return false;
+      const places = placesOf(view, pass);
+      return places.length > 0 && places.every(within);
+    });
+    if (passes.length < 2) return null;
+    const dates = new Set(passes.flatMap((pass) => placesOf(view, pass).map(({ date }) => date!)));
+    const when = first === last ? `on ${dayWords(first)}` : `from ${dayWords(first)} to ${dayWords(last)}`;
+    const wanted = passes.reduce((sum, pass) => sum + minutesOf(view, pass), 0);
+    const most = [...dates].reduce((sum, date) => sum + mostOnDate(view, person, passes, date), 0);
+    const name = personWords(view.statement, person);
+    if (wanted > most) return `${name} would have ${length(wanted)} of passes ${when} and time for ${length(most)} at most`;
+    return voiceFails(view, person, passes, dates.size) ? `${name} would sing more ${when} than they may` : null;
+  },
+};
+
+function datesOf(rooms: Iterable<{ windows: readonly { date: WallDate }[] }>): WallDate[] {
+  const dates = new Set<WallDate>();
+  for (const { windows } of rooms) for (const { date } of windows) dates.add(date);
+  return [...dates].sort();
+}
+
+/** The most minutes of these passes that a person can have on one date. */
+function mostOnDate(view: View, person: PersonId, passes: readonly Pass[], date: WallDate): Minutes {
+  const { statement } = view;
+  const facts = statement.people.get(person)!;
+  const rooms = new Set(passes.map((pass) => roomIdOf(statement, pass)!));
+  const longest = Math.max(...passes.map((pass) => minutesOf(view, pass)));
+  const open = merged(
+    [...rooms].flatMap((room): Span[] => {
+      if (view.has(`rooms.${room}.open`)) return statement.rooms.get(room)!.windows.filter((window) => window.date === date);
+      // What starts late on a day of a room without hours may go on into the next one.
+      return statement.calendar.filter((day) => day.date === date).map(({ from, to }) => ({ from, to: to + longest }));
+    }),
+  );
+  const free = without(open, merged(eventsThatHold(view, facts.events)));
+  const limit = facts.person.limits?.day;
+  const day = limit !== undefined && view.has(`people.${person}.limits`) ? limit : Infinity;
+  const windows = facts.windows && view.has(`people.${person}.windows`) ? facts.windows : null;
+  const most = (spans: readonly Span[]) => {
+    if (spans.length === 0) return 0;
+    return Math.min(total(spans), mostOfStay(view, Math.min(day, spans.at(-1)!.to - spans[0]!.from)));
+  };
+  if (!windows) return most(free);
+  // Without time off between, a day is one stay, and a stay lies in one window.
+  if (facts.person.away === undefined) return Math.max(0, ...windows.map((window) => most(common(free, [window]))));
+  return most(common(free, windows));
+}
+
+/** The most minutes of work in so long a stay: stretches of at most `mealAfter` with gaps of a meal between them. */
+function mostOfStay(view: View, stay: Minutes): Minutes {
+  const meal = ruleOf(view, 'meal');
+  const mealAfter = ruleOf(view, 'mealAfter');
+  if (meal === 0 || mealAfter === Infinity || stay <= mealAfter) return stay;
+  const rounds = Math.floor(stay / (mealAfter + meal));
+  return rounds * mealAfter + Math.min(mealAfter, stay - rounds * (mealAfter + meal));
+}
+
+/** Whether the voice minutes are more than all dates allow together, or more passes than dates take over half a day's voice each. */
+function voiceFails(view: View, person: PersonId, passes: readonly Pass[], dates: number): boolean {
+  const limit = view.statement.people.get(person)!.person.limits?.voice;
+  if (limit === undefined || !view.has(`people.${person}.limits`)) return false;
+  const voices = passes.map((pass) => (pass.voice?.[person] ? (fieldOf(view, pass, 'voice')?.[person] ?? 0) : 0));
+  const sum = voices.reduce((minutes, voice) => minutes + voice, 0);
+  return sum > limit * dates || voices.filter((voice) => voice * 2 > limit).length > dates;
+}
