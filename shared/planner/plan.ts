@@ -3,6 +3,7 @@ import type { ProductionFile } from '../contracts/resources';
 import type { Problem } from '../solver/model';
 import { search } from '../solver/search/search';
 import type { Solution } from '../solver/solution';
+import { eventsStand } from '../solver/standing-events';
 import { toProblem } from './problem';
 import { scheduleOf } from './schedule';
 
@@ -35,6 +36,7 @@ export function planProduction(file: ProductionFile, options: PlanOptions): Plan
   const seconds = () => (now() - began) / 1000;
   const problem = toProblem(file);
   const bound = 0;
+  if (!eventsStand(problem)) return noPlan('unsolved', [], seconds());
   const result = search(problem, { seed: options.seed, iterations: options.iterations, stop: options.stop, bound });
   if (result.score.missing > 0) return noPlan('unsolved', [], seconds());
   return madePlan(file, problem, result.best, bound, seconds());

@@ -44,6 +44,8 @@ export class Board {
   readonly rigEnd: Int32Array;
   readonly head: Int32Array;
   readonly tail: Int32Array;
+  /** 1 once reserve and wrap are laid. */
+  readonly closed: Int32Array;
 
   /** Items in order of laying; `next` leads to the next item of the room-day. `ref` = pass or set-up. */
   readonly itemKind: Int32Array;
@@ -67,8 +69,9 @@ export class Board {
   /** Number of items, of approvals, and the earliest date with a pass. */
   private readonly counters: Int32Array;
 
-  /** Per room-day the one before it in its room, or -1. */
+  /** Per room-day the one before and the one after it in its room, or -1. */
   private readonly earlier: Int32Array;
+  private readonly later: Int32Array;
 
   constructor(readonly problem: Problem) {
     const { passes, rooms, days, people, events } = problem;
@@ -82,7 +85,7 @@ export class Board {
     const sizes = [
       ...Array<number>(3).fill(passes.length),
       ...Array<number>(3).fill(rooms.length),
-      ...Array<number>(10).fill(days.length),
+      ...Array<number>(11).fill(days.length),
       ...Array<number>(5).fill(items),
       ...Array<number>(2).fill(approvals),
       people.length,
@@ -109,6 +112,7 @@ export class Board {
     this.rigEnd = part();
     this.head = part();
     this.tail = part();
+    this.closed = part();
     this.itemKind = part();
     this.itemStart = part();
     this.itemEnd = part();
@@ -123,7 +127,12 @@ export class Board {
     this.entryDate = part();
     this.counters = part();
     this.earlier = new Int32Array(days.length).fill(NONE);
-    for (const room of rooms) room.days.forEach((day, i) => (this.earlier[day] = i > 0 ? room.days[i - 1]! : NONE));
+    this.later = new Int32Array(days.length).fill(NONE);
+    for (const room of rooms)
+      for (let i = 1; i < room.days.length; i++) {
+        this.earlier[room.days[i]!] = room.days[i - 1]!;
+        this.later[room.days[i - 1]!] = room.days[i]!;
+      }
     this.fillBlank();
     this.blank = this.memory.slice();
   }
@@ -228,6 +237,15 @@ export class Board {
     let before = this.earlier[day]!;
     while (before >= 0 && this.first[before] === EVER) before = this.earlier[before]!;
     return before;
+  }
+
+  /** Whether work can still be laid in a room-day: it is not closed, and no later one of its room is used. */
+  isOpen(day: number): boolean {
+    if (this.closed[day] === 1) return false;
+    const { days } = this.problem;
+    for (let next = this.later[day]!; next >= 0 && days[next]!.dateIndex === days[day]!.dateIndex; next = this.later[next]!)
+      if (this.head[next]! >= 0) return false;
+    return true;
   }
 
   /** Puts an entry into a person's list, which stays sorted by start. */

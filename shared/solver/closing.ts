@@ -15,6 +15,8 @@ export interface Tally {
   maybe: Minutes;
 }
 
+export const emptyTally = (): Tally => ({ waiting: 0, changeover: 0, days: 0, overtime: 0, calls: 0, maybe: 0 });
+
 /** Hears what closing a date adds. Pauses stand in `Closer.rests`, which `named` counts by position. */
 export interface ClosingSink {
   work(kind: 'reserve' | 'wrap', day: number, from: Minute, to: Minute): void;
@@ -28,7 +30,7 @@ export interface ClosingSink {
 /** Closes a date once all its passes are placed: pauses are named, reserve and wrap laid, and the date's cost is counted. */
 export class Closer {
   readonly rests: Rests;
-  private readonly daysOf: number[][];
+  private tally: Tally = emptyTally();
   private left: Minutes = 0;
   private lastMeal: Minute = 0;
   private day = 0;
@@ -41,25 +43,30 @@ export class Closer {
     private readonly board: Board,
   ) {
     this.rests = new Rests(problem);
-    this.daysOf = problem.dates.map((_, date) => problem.days.flatMap((day, d) => (day.dateIndex === date ? [d] : [])));
     this.pieces = {
       reserve: (from, to) => this.piece('reserve', from, to),
       wrap: (from, to) => this.piece('wrap', from, to),
     };
   }
 
-  /** Adds what a date costs to the tally. False where a room-day could not be closed within its hours. */
-  close(date: number, tally: Tally, sink: ClosingSink | null = null): boolean {
+  /** Begins a date; its room-days are then closed one by one, earlier windows of a room first, and at last its people. */
+  open(tally: Tally, sink: ClosingSink | null): void {
+    this.tally = tally;
     this.sink = sink;
     this.rests.count = 0;
-    for (const d of this.daysOf[date]!) if (this.board.head[d]! >= 0 && !this.closeDay(d, tally)) return false;
-    for (let q = 0; q < this.problem.people.length; q++) this.closePerson(q, date, tally);
-    sink?.rests();
-    return true;
   }
 
-  private closeDay(d: number, tally: Tally): boolean {
-    const { board, problem } = this;
+  /** Counts what the people of a date cost, and ends it. */
+  closePeople(date: number): void {
+    for (let q = 0; q < this.problem.people.length; q++) this.closePerson(q, date);
+    this.sink?.rests();
+  }
+
+  /** Ends a room-day. False where reserve and wrap find no place within its hours. */
+  closeDay(d: number): boolean {
+    const { board, problem, tally } = this;
+    if (board.head[d]! < 0 || board.closed[d] === 1) return true;
+    board.closed[d] = 1;
     const first = board.first[d]!;
     this.day = d;
     this.left = board.passCount[d]! > 0 ? reserveOf(problem, board.minutes[d]!) : 0;
@@ -145,8 +152,8 @@ export class Closer {
     else if (mealFits) this.rests.add(MEAL, start, end, this.day);
   }
 
-  private closePerson(q: number, date: number, tally: Tally): void {
-    const { board, problem } = this;
+  private closePerson(q: number, date: number): void {
+    const { board, problem, tally } = this;
     const offset = board.offset[q]!;
     let last = offset + board.entryCount[q]! - 1;
     while (last >= offset && board.entryDate[last]! > date) last -= 1;

@@ -1,6 +1,6 @@
 import { CHANGEOVER, RIG, Board } from './board';
 import { standingIn } from './chain';
-import { Closer, type ClosingSink, type Tally } from './closing';
+import { Closer, emptyTally, type ClosingSink, type Tally } from './closing';
 import { gridAtOrAfter } from './grid';
 import { EVER, type Problem } from './model';
 import { Placer } from './placing';
@@ -27,8 +27,6 @@ class Snapshot {
     this.memory = new Int32Array(size);
   }
 }
-
-const emptyTally = (): Tally => ({ waiting: 0, changeover: 0, days: 0, overtime: 0, calls: 0, maybe: 0 });
 
 function copyTally(into: Tally, from: Tally): void {
   into.waiting = from.waiting;
@@ -60,7 +58,7 @@ export class Decoder {
   constructor(private readonly problem: Problem) {
     this.board = new Board(problem);
     this.closer = new Closer(problem, this.board);
-    this.placer = new Placer(problem, this.board);
+    this.placer = new Placer(problem, this.board, this.closer);
     this.sequence = new Int32Array(problem.passes.length);
     this.pending = new Int32Array(problem.passes.length);
     const snapshots = () => problem.dates.map(() => new Snapshot(this.board.memorySize));
@@ -103,12 +101,14 @@ export class Decoder {
         board.save(this.fresh[date]!.memory);
         copyTally(this.fresh[date]!.tally, tally);
       }
+      this.closer.open(tally, sink);
       for (const layer of this.layersOfDate[date]!) {
         for (; at < order.length && solution.layerOf(order[at]!) === layer; at++) this.attempt(order[at]!, solution);
         if (this.pendingCount > 0) this.retry(layer, solution);
         for (const day of this.daysOfLayer[layer]!) if (solution.eve[day] === 1) this.prepareEve(day, at, solution);
       }
-      valid = this.closer.close(date, tally, sink);
+      for (const layer of this.layersOfDate[date]!) for (const day of this.daysOfLayer[layer]!) valid &&= this.closer.closeDay(day);
+      this.closer.closePeople(date);
     }
     this.count(score, valid);
   }
@@ -141,6 +141,14 @@ export class Decoder {
       order[at++] = sequence[i]!;
     }
     while (next < count) order[at++] = unplaced[next++]!;
+    // Members of a group may lie in different layers.
+    for (let i = 1; i < order.length; i++) {
+      const pass = order[i]!;
+      const layer = solution.layerOf(pass);
+      let k = i;
+      for (; k > 0 && solution.layerOf(order[k - 1]!) > layer; k--) order[k] = order[k - 1]!;
+      order[k] = pass;
+    }
   }
 
   private attempt(pass: number, solution: Solution): void {
@@ -186,7 +194,7 @@ export class Decoder {
     const { problem, board } = this;
     const roomDay = problem.days[day]!;
     const room = problem.rooms[roomDay.room]!;
-    if (!room.standing) return;
+    if (!room.standing || !board.isOpen(day)) return;
     const standing = standingIn(board, roomDay);
     const wanted = this.nextSetup(roomDay.room, at, solution);
     if (wanted < 0 || wanted === standing) return;

@@ -2,24 +2,16 @@ import type { Minute } from '../domain/flavours';
 import { Attempt } from './attempt';
 import { PASS, READY_ENTRY, RIG, type Board } from './board';
 import { Chain } from './chain';
-import { apart } from './constraints/apart';
-import type { StartConstraint } from './constraints/constraint';
-import { gearCount } from './constraints/gear-count';
-import { dayLimit } from './constraints/limits';
+import type { Closer } from './closing';
+import { OF_A_PERSON, OF_THE_PASS } from './constraints/all';
 import { onePlace } from './constraints/one-place';
-import { ownMeals } from './constraints/own-meals';
-import { stays } from './constraints/stays';
-import { turnaround } from './constraints/turnaround';
-import { voice } from './constraints/voice';
 import { EVER, type Problem } from './model';
 import { layTail, reserveOf } from './tail';
 
-/** Asked once a try, and once for each person of the pass with the new items in the person's day. */
-const OF_THE_PASS: readonly StartConstraint[] = [apart, gearCount];
-const OF_A_PERSON: readonly StartConstraint[] = [stays, turnaround, dayLimit, ownMeals, voice];
-
 /** What a solution says about a pass beyond its place in the order. */
 export interface Wishes {
+  /** Per pass: the room-day in which it is wanted. */
+  day: Int32Array;
   /** Per pass: idle minutes before it and what it brings along. */
   lead: Int32Array;
   /** Per room-day: minutes after opening before its first item. */
@@ -38,6 +30,7 @@ export class Placer {
   constructor(
     private readonly problem: Problem,
     private readonly board: Board,
+    private readonly closer: Closer,
   ) {
     this.attempt = new Attempt(problem);
     this.chain = new Chain(problem);
@@ -60,7 +53,7 @@ export class Placer {
   private placeTogether(group: readonly number[], pass: number, day: number, wishes: Wishes): boolean {
     const before = new Int32Array(this.board.memorySize);
     this.board.save(before);
-    const days = group.map((member) => (member === pass ? day : this.dayBeside(member, day)));
+    const days = group.map((member) => (member === pass ? day : this.dayBeside(member, day, wishes)));
     if (days.includes(-1)) return false;
     for (let target = NO_TARGET, tries = 0; tries < 500; tries++) {
       let agreed = target;
@@ -86,21 +79,23 @@ export class Placer {
     return false;
   }
 
-  /** The room-day of a pass that overlaps another room-day most closely in time, or -1. */
-  private dayBeside(pass: number, day: number): number {
+  /** The room-day of a pass in which it can run beside another room-day: the wanted one, else the first that overlaps; or -1. */
+  private dayBeside(pass: number, day: number, wishes: Wishes): number {
     const { days, passes } = this.problem;
     const other = days[day]!;
-    for (const candidate of passes[pass]!.days) {
+    const beside = (candidate: number) => {
       const one = days[candidate]!;
-      if (candidate !== day && one.room !== other.room && one.from < other.to && other.from < one.to) return candidate;
-    }
-    return -1;
+      return one.room !== other.room && one.from < other.to && other.from < one.to && this.board.isOpen(candidate);
+    };
+    const wanted = wishes.day[pass]!;
+    return wanted >= 0 && beside(wanted) ? wanted : (passes[pass]!.days.find(beside) ?? -1);
   }
 
   /** The earliest start at or after `target`, with the chain laid for it; `EVER` where there is none. */
   private search(pass: number, day: number, wishes: Wishes, target: Minute): Minute {
     const { board, attempt, chain, problem } = this;
     const model = problem.passes[pass]!;
+    if (!this.opened(day)) return EVER;
     let start = chain.prepare(board, pass, day, wishes.lead[pass]!, wishes.begin[day]!);
     if (start >= EVER) return EVER;
     if (target > start) start = target;
@@ -126,6 +121,17 @@ export class Placer {
       }
       return this.tailFits(day, model.minutes) ? start : EVER;
     }
+  }
+
+  /** Whether a room-day can take work. Where it touches the one before, that one is closed first, as its last work then goes on in this one. */
+  private opened(day: number): boolean {
+    const { board, problem } = this;
+    if (!board.isOpen(day)) return false;
+    if (board.head[day]! >= 0) return true;
+    const before = board.previousDay(day);
+    if (before < 0) return true;
+    const apart = problem.days[day]!.from - problem.days[before]!.to;
+    return apart >= Math.max(problem.rules.meal, problem.rules.break) || this.closer.closeDay(before);
   }
 
   /** The first start at or after a minute that calendars and pins allow. */
