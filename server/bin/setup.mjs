@@ -9,6 +9,8 @@ import { say, step, Trouble, troubleFrom } from './words.mjs';
 
 const NO_MAIN_CLUSTER = '/etc/postgresql-common/createcluster.d/no-main-cluster.conf';
 const CHROMIUM = '/usr/bin/chromium';
+// Debian's Chromium brings no letters of its own: Latin, CJK and emoji of names and titles must print.
+const FONTS = ['fonts-liberation', 'fonts-droid-fallback', 'fonts-noto-color-emoji'];
 const BUILDING = 'node_modules/.cache/redpoll-build.json';
 
 /**
@@ -18,7 +20,7 @@ const BUILDING = 'node_modules/.cache/redpoll-build.json';
 function missingPackages({ database, tests }) {
   const missing = [];
   if (database && !hasPostgres()) missing.push('postgresql');
-  if (!fs.existsSync(process.env.CHROMIUM ?? CHROMIUM)) missing.push('chromium', 'fonts-liberation');
+  if (!fs.existsSync(process.env.CHROMIUM ?? CHROMIUM)) missing.push('chromium', ...FONTS);
   if (tests && !fs.existsSync('/usr/bin/pdftotext')) missing.push('poppler-utils');
   return missing;
 }

@@ -15,7 +15,7 @@ export function planningTimes(file: ProductionFile): Measure[] {
     stop: () => performance.now() - began >= BUDGET,
     onProgress: () => (first ??= performance.now() - began),
   });
-  if (outcome.status === 'impossible' || outcome.status === 'unsolved' || first === null) throw new Error(`no plan: ${outcome.status}`);
+  if (outcome.cost === null || first === null) throw new Error(`no plan: ${outcome.status}`);
   const { violations } = checkPlan(file, outcome);
   if (violations.length) throw new Error(`the plan is not valid: ${violations[0]?.says}`);
   return [

@@ -34,7 +34,7 @@ export async function publishDemo(address: string, { before }: DemoOptions = {})
   const file = await exported(client, id);
   const work = { seed: 1, iterations: 100 };
   const outcome = planProduction(file, { ...work, stop: () => false });
-  if (outcome.status === 'impossible' || outcome.status === 'unsolved') throw new Error(`The demo has no plan: ${outcome.status}`);
+  if (outcome.cost === null) throw new Error(`The demo has no plan: ${outcome.status}`);
   const plan = await client.json<Draft>('POST', `/api/productions/${id}/plans`, { inputRevision: revision, ...work, outcome });
   await client.json('POST', `/api/productions/${id}/versions`, { plan: plan.id });
   return { client, id, file, plan: outcome };

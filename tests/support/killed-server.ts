@@ -2,20 +2,10 @@ import { randomBytes, randomUUID } from 'node:crypto';
 import { expect } from 'vitest';
 import type { Change } from '../../shared/contracts/changes';
 import type { HistoryEntry, Snapshot } from '../../shared/contracts/api';
+import { Random } from '../../shared/solver/search/random';
 import { Client } from './client';
 import { startServer } from './server';
 import { freePort } from './start-command';
-
-/** mulberry32: a small generator whose seed can be printed, so that a failure can be repeated. */
-function generator(seed: number): () => number {
-  let state = seed;
-  return () => {
-    state = (state + 0x6d2b79f5) | 0;
-    let mixed = Math.imul(state ^ (state >>> 15), 1 | state);
-    mixed = (mixed + Math.imul(mixed ^ (mixed >>> 7), 61 | mixed)) ^ mixed;
-    return ((mixed ^ (mixed >>> 14)) >>> 0) / 2 ** 32;
-  };
-}
 
 interface Attempt {
   change: Change;
@@ -64,7 +54,7 @@ const numberIn = (title: unknown) => Number(/^Round (\d+)$/.exec(String(title))?
  * in the rows and once in the history, and whether an unanswered change that is sent again is applied exactly once.
  */
 export async function surviveKills(databaseUrl: string, rounds: number, seed: number): Promise<void> {
-  const random = generator(seed);
+  const random = new Random(seed);
   const secret = randomBytes(32).toString('hex');
   const port = await freePort();
   let server = await startServer({ databaseUrl, port, secret });
@@ -78,7 +68,7 @@ export async function surviveKills(databaseUrl: string, rounds: number, seed: nu
 
     for (let round = 0; round < rounds; round++) {
       const writing = Promise.all(writers.map((writer) => writer.writeUntilGone()));
-      await new Promise((resolve) => setTimeout(resolve, 50 + random() * 300));
+      await new Promise((resolve) => setTimeout(resolve, 50 + random.below(300)));
       await server.kill();
       await writing;
       server = await startServer({ databaseUrl, port, secret });
