@@ -22,13 +22,16 @@ export const eventName = (event: SessionEvent): string => event.name ?? event.ki
 
 const isLive = (part: Part): boolean => part.mode === 'live' || part.mode === 'guide';
 
+/** Words for playing together, which the title alone says as well. */
+const TOGETHER: ReadonlySet<string> = new Set(['basics', 'live']);
+
 /** What a name says beyond the song's title: `Weir Song horns` → `horns`; the title alone, or its basics, stay the title. */
 function beyondTitle(name: string, title: string | null): string {
   if (title === null || !name.toLowerCase().startsWith(title.toLowerCase())) return name;
   const beyond = name.slice(title.length);
   if (/^[\p{L}\p{N}]/u.test(beyond)) return name;
   const rest = beyond.replace(/^[\s:,–-]+/, '');
-  return rest === '' || rest.toLowerCase() === 'basics' ? title : rest;
+  return rest === '' || TOGETHER.has(rest.toLowerCase()) ? title : rest;
 }
 
 /** The name of a pass: its own, else the song's title for the parts that are played together, else the added parts. */

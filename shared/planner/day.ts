@@ -5,7 +5,7 @@ import { eventName, passName } from '../domain/passes';
 import { namesOf } from '../domain/sheets/names';
 import { clock, dayWords } from '../time/words';
 import { zoneClock, type ZoneClock } from '../time/wall';
-import { type DayRoom, isBeforehand, minuteOf, notesOf, type Reading, roomsOf, type Window } from './dayNotes';
+import { besideOf, type DayRoom, minuteOf, notesOf, type Reading, roomsOf, type Window } from './dayNotes';
 import { staysOf, type Stay, type TimedItem } from './threads';
 
 /** One item of a day as it is drawn and read out. */
@@ -28,6 +28,8 @@ export interface DayItem {
   full: string;
   people: PersonId[];
   pinned: boolean;
+  /** Said beside the day rather than drawn in it. */
+  beside: boolean;
 }
 
 /** One person of a day: a thread, or only a name where they are not called. */
@@ -95,6 +97,7 @@ export function planDays(file: ProductionFile, plan: { items: readonly PlanItem[
 
   return dates.map((date, index): PlanDay => {
     const items = byDate.get(date)!.sort((a, b) => a.from - b.from || a.to - b.to);
+    const beside = besideOf(date, items, windows);
     const from = spans[index]!.midnight + first;
     const to = from + length;
     return {
@@ -105,7 +108,7 @@ export function planDays(file: ProductionFile, plan: { items: readonly PlanItem[
       from,
       to,
       hours: hoursBetween(from, to, zone),
-      items: items.map((item) => dayItem(item, reading)),
+      items: items.map((item) => dayItem(item, beside.has(item), reading)),
       threads: threadsOf(date, items, plan.calls, reading),
       shortest: Number.isFinite(shortest) ? shortest : HOUR,
     };
@@ -117,7 +120,8 @@ function spanOf(date: WallDate, all: TimedItem[], windows: Window[], zone: ZoneC
   const midnight = minuteOf(zone, `${date}T00:00`);
   const open = windows.filter((window) => window.date === date);
   const opens = Math.min(...open.map(({ from }) => from));
-  const items = all.filter((item) => !isBeforehand(item, opens));
+  const beside = besideOf(date, all, windows);
+  const items = all.filter((item) => !beside.has(item));
   const first = Math.min(...items.map(({ from }) => from));
   const last = Math.max(...items.map(({ to }) => to));
   const closes = Math.max(...open.map(({ to }) => to));
@@ -140,7 +144,7 @@ function hoursBetween(from: Minute, to: Minute, zone: ZoneClock): PlanDay['hours
   return hours;
 }
 
-function dayItem(item: TimedItem, reading: Reading): DayItem {
+function dayItem(item: TimedItem, beside: boolean, reading: Reading): DayItem {
   const pass = item.kind === 'pass' ? reading.names.pass(item.id) : undefined;
   return {
     key: `${item.kind} ${item.id ?? item.setup ?? ''} ${item.room ?? ''} ${item.start}`,
@@ -154,6 +158,7 @@ function dayItem(item: TimedItem, reading: Reading): DayItem {
     ...nameOf(item, reading),
     people: item.people,
     pinned: pass?.pin !== undefined,
+    beside,
   };
 }
 

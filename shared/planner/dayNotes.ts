@@ -42,9 +42,18 @@ export function minuteOf(zone: ZoneClock, wall: string): Minute {
   return minuteOf(zone, `${wall.slice(0, 11)}${String(Math.min(23, hour + 1)).padStart(2, '0')}:00`);
 }
 
-/** What goes on before the first room opens and calls nobody (a tuner, a delivery) is said beside the day, so that the day is not drawn from then on. */
-export function isBeforehand(item: TimedItem, opens: Minute): boolean {
-  return item.kind === 'event' && item.people.length === 0 && item.to <= opens;
+/**
+ * Events that call nobody and in which nothing else goes on, before the first room opens or in a room that is not used that day (a
+ * tuner, a delivery): they are said beside the day, so that the drawing keeps to its work.
+ */
+export function besideOf(date: WallDate, items: TimedItem[], windows: Window[]): ReadonlySet<TimedItem> {
+  const opens = Math.min(...windows.filter((window) => window.date === date).map(({ from }) => from));
+  const used = new Set(items.filter(({ kind }) => kind !== 'event').map(({ room }) => room));
+  return new Set(
+    items.filter(
+      (item) => item.kind === 'event' && item.people.length === 0 && used.size > 0 && (item.to <= opens || !used.has(item.room)),
+    ),
+  );
 }
 
 /** The rooms that are open on a date. */
@@ -69,16 +78,13 @@ export function roomsOf(date: WallDate, items: TimedItem[], { file, zone, window
   });
 }
 
-/** What is said beside a day: what is over before the rooms open, and who cannot be there for all of their hours. */
+/** What is said beside a day: events beside its work, and who cannot be there for all of its hours. */
 export function notesOf(date: WallDate, items: TimedItem[], reading: Reading): string[] {
-  const { file, windows } = reading;
-  const opens = Math.min(...windows.filter((window) => window.date === date).map(({ from }) => from));
-  const beforehand = items.flatMap((item) => {
-    if (!isBeforehand(item, opens)) return [];
-    const event = file.events.find(({ id }) => id === item.id);
-    return [`${event ? eventName(event) : item.id} ${clock(item.start)}–${clock(item.end)}`];
+  const beside = [...besideOf(date, items, reading.windows)].map((item) => {
+    const event = reading.file.events.find(({ id }) => id === item.id);
+    return `${event ? eventName(event) : item.id} ${clock(item.start)}–${clock(item.end)}`;
   });
-  return [...beforehand, ...partly(date, items, reading)];
+  return [...beside, ...partly(date, items, reading)];
 }
 
 /** People who are called that day and come after the rooms they work in open, or have to leave before these close. */

@@ -88,6 +88,8 @@ const PITCH = { most: 20, least: 13 };
 const ALL_NAMED = 14;
 const EDGE = 8;
 const NAME_MOST = 78;
+/** How far right of its thread a name begins, in sizes. */
+const NAME_START = 0.3;
 const BELOW = 14;
 
 /** px per minute for a day, so that its shortest item still holds one line. */
@@ -101,7 +103,7 @@ const drawn = (day: PlanDay): PlanDay['threads'] =>
 
 /** Rooms that get a column: those in which something is drawn, or the first of an empty day; a last one for what happens in no room. */
 export function columns(day: PlanDay): { room: string | null; title: string }[] {
-  const items = day.items.filter(({ to }) => to > day.from);
+  const items = day.items.filter(({ beside }) => !beside);
   const busy = day.rooms.filter(({ id }) => items.some(({ room }) => room === id));
   const rooms = (busy.length > 0 ? busy : day.rooms.slice(0, 1)).map(({ id, name }) => ({ room: id as string | null, title: name }));
   const known = new Set(rooms.map(({ room }) => room));
@@ -134,7 +136,8 @@ function threadRoom(day: PlanDay, mode: DrawingMode, width: number): ThreadRoom 
   const turn = Math.asin(Math.min(1, (size * 0.9) / pitch));
   const names = threads.map(({ short }) => fitText(short, NAME_MOST, size));
   const longest = Math.max(0, ...names.map((name) => textWidth(name, size)));
-  const beyond = names.map((name, index) => textWidth(name, size) * Math.cos(turn) - (names.length - 1 - index) * pitch);
+  const start = size * NAME_START;
+  const beyond = names.map((name, index) => start + textWidth(name, size) * Math.cos(turn) - (names.length - 1 - index) * pitch);
   return {
     pitch,
     angle: (-turn * 180) / Math.PI,
@@ -169,7 +172,7 @@ export function layoutDay(day: PlanDay, { mode, width }: DrawingOptions): DayDra
     return index < 0 ? cols.length - 1 : index;
   };
   const blocks = day.items
-    .filter(({ from, to }) => from < to && to > day.from)
+    .filter(({ from, to, beside }) => from < to && !beside)
     .map((item): Block => {
       const lane = lanes[laneOf(item)]!;
       const rect = { x: lane.x, y: y(item.from), width: lane.width, height: Math.max(2, (item.to - item.from) * scale - 1.5) };
@@ -189,7 +192,7 @@ export function layoutDay(day: PlanDay, { mode, width }: DrawingOptions): DayDra
     blocks,
     names: threads.map(({ person, stays }, index) => ({
       person,
-      x: threadsLeft + (index + 0.5) * pitch + type.name * 0.3,
+      x: threadsLeft + (index + 0.5) * pitch + type.name * NAME_START,
       y: top - 11,
       angle,
       text: names[index]!,

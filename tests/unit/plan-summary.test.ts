@@ -65,7 +65,7 @@ describe('the days of a plan', () => {
     expect(tuesday!.notes).toEqual(['Lys 13:00–17:00']);
   });
 
-  it('says beside the day what is over before the rooms open, and draws the day from then on', () => {
+  it('says beside the day what calls nobody before the rooms open or where nothing else goes on, and draws the day without it', () => {
     const file = sampleFile();
     file.events = [{ id: 'tuner', name: 'piano tuner', kind: 'tuner', room: 'a', from: '2027-03-08T08:00', to: '2027-03-08T09:30' }];
     const plan = samplePlan();
@@ -73,6 +73,7 @@ describe('the days of a plan', () => {
     const [monday] = planDays(file, plan);
     expect(monday!.notes).toEqual(['piano tuner 08:00–09:30']);
     expect(monday!.hours[0]!.label).toBe('10:00');
+    expect(monday!.items.map(({ beside }) => beside).filter(Boolean)).toHaveLength(1);
     // Somebody who is called for it makes it part of the day.
     plan.items[0]!.people = ['petra'];
     expect(planDays(file, plan)[0]!.hours[0]!.label).toBe('08:00');

@@ -42,8 +42,7 @@ function faultsOf(drawing: DayDrawing, least: number): string[] {
   if (xs.some((x) => x < drawing.threadsLeft || x > drawing.threadsRight)) faults.push('a thread stands outside');
   for (const name of drawing.names) {
     const length = textWidth(name.text, TYPE.screen.name);
-    if (name.x + length * Math.cos((name.angle * Math.PI) / 180) > drawing.width + 6)
-      faults.push(`the name ${name.text} leaves the drawing`);
+    if (name.x + length * Math.cos((name.angle * Math.PI) / 180) > drawing.width) faults.push(`the name ${name.text} leaves the drawing`);
     if (name.y + length * Math.sin((name.angle * Math.PI) / 180) < 0) faults.push(`the name ${name.text} is cut off above`);
   }
   return faults;

@@ -61,11 +61,14 @@ export function threadsInWords(day: PlanDay): string[] {
   );
 }
 
-/** What stands under a day's name: its rooms with their hours, and who cannot stay. */
+/** What stands under a day's name: its rooms with their hours, and what else holds that day. */
 export function dayInWords(day: PlanDay): string {
   const used = day.rooms.filter((room) => room.used);
-  const rooms = (used.length > 0 ? used : day.rooms).map(
-    ({ name, open, loudUntil }) => `${name} ${open}${loudUntil === null ? '' : `, loud until ${loudUntil}`}`,
-  );
+  const byHours = new Map<string, string[]>();
+  for (const { name, open, loudUntil } of used.length > 0 ? used : day.rooms) {
+    const hours = `${open}${loudUntil === null ? '' : `, loud until ${loudUntil}`}`;
+    byHours.set(hours, [...(byHours.get(hours) ?? []), name]);
+  }
+  const rooms = [...byHours].map(([hours, names]) => `${names.join(' and ')} ${hours}`);
   return [...rooms, ...day.notes].join(' · ');
 }
