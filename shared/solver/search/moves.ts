@@ -127,15 +127,11 @@ export class Moves {
   private gather(solution: Solution): number {
     const pass = this.pick();
     const { people, setup, days } = this.problem.passes[pass]!;
-    let other = -1;
-    if (people.length > 0 && this.random.below(3) > 0) {
-      const { passes } = this.problem.people[people[this.random.below(people.length)]!]!;
-      other = passes[this.random.below(passes.length)]!;
-    } else {
-      other = this.pick();
-      if (this.problem.passes[other]!.setup !== setup) return -1;
-    }
+    const byPerson = people.length > 0 && this.random.below(3) > 0;
+    const company = byPerson ? this.problem.people[people[this.random.below(people.length)]!]!.passes : this.movable;
+    const other = company[this.random.below(company.length)]!;
     if (other === pass || solution.day[other]! < 0) return -1;
+    if (!byPerson && this.problem.passes[other]!.setup !== setup) return -1;
     const layer = solution.layerOf(other);
     let day = -1;
     for (const candidate of days) if (this.problem.days[candidate]!.layer === layer) day = candidate;
