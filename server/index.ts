@@ -6,11 +6,13 @@ import { startJobs } from './jobs';
 import { migrate } from './migrations';
 import { openDatabase } from './models/database';
 import { loadStartingPoints } from './resources/starting-points/service';
+import { SheetPress } from './sheets/press';
 
 const config = readConfig(process.env);
 const log = pino({ level: config.logLevel });
 const db = openDatabase(config.databaseUrl);
-const context: Context = { config, db, log, now: () => new Date() };
+const press = new SheetPress(config.chromium);
+const context: Context = { config, db, log, press, now: () => new Date() };
 
 await migrate(db.sequelize);
 await loadStartingPoints(context);
@@ -26,6 +28,10 @@ const server = createApp(context).listen(config.port, config.host, (error?: Erro
   console.log(`listening on http://${config.host.includes(':') ? `[${config.host}]` : config.host}:${port}`);
 });
 
+/** The first sheet should not wait for a browser to start, and the start not for the browser. */
+const WARM_UP_AFTER = 3000;
+setTimeout(() => press.warmUp().catch((error: Error) => log.warn(error.message)), WARM_UP_AFTER).unref();
+
 const PATIENCE = 5000;
 let closing: Promise<void> | null = null;
 
@@ -37,6 +43,7 @@ function close(): Promise<void> {
     const impatient = setTimeout(() => server.closeAllConnections(), PATIENCE);
     await closed;
     clearTimeout(impatient);
+    await press.close();
     await jobs.stop();
     await db.close();
     process.exit(0);

@@ -15,6 +15,7 @@ const TITLES = {
   'wrong-fields': [422, 'Something in it is wrong'],
   'too-many': [429, 'Too many attempts'],
   unavailable: [503, 'Not available just now'],
+  'cannot-print': [503, 'Nothing can be printed just now'],
   'server-fault': [500, 'A fault of ours'],
 } as const satisfies Record<string, [number, string]>;
 export type RefusalCode = keyof typeof TITLES;

@@ -1,5 +1,5 @@
 import type { Context } from '../context';
-import type { InvitationModel, MemberModel } from '../models/productions';
+import type { InvitationModel, LinkModel, MemberModel } from '../models/productions';
 import type { Actor, Membership } from './actor';
 import { Refusal } from './errors';
 import { validId } from './validate';
@@ -15,8 +15,8 @@ export async function membershipOf(context: Context, actor: Actor, production: s
   return { memberId: member.id, productionId, role: member.role, person: personKeyOf(member) };
 }
 
-/** The key of the person whom a member is or shall be, read with the association. */
-export function personKeyOf(member: MemberModel | InvitationModel): string | null {
+/** The key of the person whom a member is or shall be, or whose link it is, read with the association. */
+export function personKeyOf(member: MemberModel | InvitationModel | LinkModel): string | null {
   const person = member.get('person') as { get: (name: string) => unknown } | null | undefined;
   const key = person?.get('key');
   return typeof key === 'string' ? key : null;

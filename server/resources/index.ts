@@ -1,12 +1,15 @@
 import type { Context } from '../context';
 import type { Routes } from '../http/routes';
 import { accountRoutes } from './account/routes';
+import { calendarRoutes } from './calendar/routes';
 import { changeRoutes } from './changes/routes';
 import { healthRoutes } from './health/routes';
+import { linkRoutes } from './links/routes';
 import { memberRoutes } from './members/routes';
 import { planRoutes } from './plans/routes';
 import { productionRoutes } from './productions/routes';
 import { sessionRoutes } from './session/routes';
+import { sheetRoutes } from './sheets/routes';
 import { startingPointRoutes } from './starting-points/routes';
 
 /** Every resource that opens addresses; each writes its paths out in full. */
@@ -19,4 +22,7 @@ export const resources: readonly ((routes: Routes, context: Context) => void)[] 
   changeRoutes,
   planRoutes,
   memberRoutes,
+  sheetRoutes,
+  linkRoutes,
+  calendarRoutes,
 ];

@@ -6,6 +6,11 @@ export class NoBrowserError extends Error {}
 /** The page took too long, or the browser broke twice. */
 export class PrintError extends Error {}
 
+/** Too many sheets wait already. */
+export class BusyError extends Error {}
+
+/** Sheets that may wait; with about a tenth of a second each, nobody waits longer than a few. */
+const MOST_WAITING = 60;
 /** Pages that print at the same time; more wait, so that a rush of sheets does not take the machine's memory. */
 const AT_ONCE = 2;
 const LOAD_MS = 15_000;
@@ -75,6 +80,7 @@ export class PdfPrinter {
   }
 
   async #turn<Result>(work: () => Promise<Result>): Promise<Result> {
+    if (this.#queue.length >= MOST_WAITING) throw new BusyError('Many sheets are being printed just now. Try again in a minute.');
     if (this.#working >= AT_ONCE) await new Promise<void>((resolve) => this.#queue.push(resolve));
     else this.#working++;
     try {

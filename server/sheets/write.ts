@@ -6,8 +6,7 @@ import { callTexts } from '../../shared/domain/calendar/call-text';
 import { callSheet, calledPeople } from '../../shared/domain/sheets/call-sheet';
 import { documentName } from '../../shared/domain/sheets/file-names';
 import { runSheet, runSheetDates } from '../../shared/domain/sheets/run-sheet';
-import type { SheetEdition } from '../../shared/domain/sheets/sheet';
-import { toWall } from '../../shared/time/wall';
+import { type SheetEdition, wallAt } from '../../shared/domain/sheets/sheet';
 import { uidOf } from '../calendar/uid';
 import { writeCalendar } from '../calendar/write';
 import { SheetPress } from './press';
@@ -16,11 +15,6 @@ export interface WriteSheetsOptions {
   now: Date;
   /** The Chromium to print with; absent = Debian's. */
   chromium?: string;
-}
-
-/** The wall clock of the production at a moment, to the minute. */
-export function wallNow(now: Date, timezone: string): string {
-  return toWall(Math.floor(now.getTime() / 60_000), timezone);
 }
 
 /**
@@ -62,7 +56,7 @@ function* sheetsOf(
   now: Date,
 ): Generator<{ name: string; content: () => Promise<Uint8Array> }> {
   const { code, timezone } = file.production;
-  const edition: SheetEdition = { version: null, printed: wallNow(now, timezone) };
+  const edition: SheetEdition = { version: null, printed: wallAt(now.getTime(), timezone) };
   for (const date of runSheetDates(file, plan)) {
     const sheet = runSheet(file, plan, { date, edition });
     if (sheet) yield { name: documentName({ code, version: null, date }, 'RUN-SHEET.pdf'), content: () => press.runSheet(sheet) };

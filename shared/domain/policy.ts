@@ -26,7 +26,8 @@ const ACTIONS = {
   /** Print any sheet; a musician prints the call sheet of their own from a published version. */
   print: CREW,
   printOwn: BAND,
-  readLinks: DESK,
+  /** Make, see and withdraw a calendar address of one's own; `manageLinks` everybody's. */
+  ownLinks: BAND,
   manageLinks: DESK,
   readMembers: CREW,
   manageMembers: PRODUCER,

@@ -5,6 +5,7 @@ import { readConfig, type Config } from '../../server/config';
 import type { Context } from '../../server/context';
 import { openDatabase, type Database } from '../../server/models/database';
 import { loadStartingPoints } from '../../server/resources/starting-points/service';
+import { SheetPress } from '../../server/sheets/press';
 import { freshDatabase } from './database';
 
 /** The app on a database of its own, with a clock that tests may put forward. */
@@ -35,7 +36,8 @@ export async function openApp(settings: Partial<Config> = {}): Promise<OpenApp> 
   };
   const db = openDatabase(url);
   let ahead = 0;
-  const context: Context = { config, db, log: pino({ level: config.logLevel }), now: () => new Date(Date.now() + ahead) };
+  const press = new SheetPress(config.chromium);
+  const context: Context = { config, db, log: pino({ level: config.logLevel }), press, now: () => new Date(Date.now() + ahead) };
   await loadStartingPoints(context);
   return {
     app: createApp(context),
@@ -45,6 +47,9 @@ export async function openApp(settings: Partial<Config> = {}): Promise<OpenApp> 
       ahead += milliseconds;
     },
     withSettings: (changed) => createApp({ ...context, config: { ...config, ...changed } }),
-    close: () => db.close(),
+    close: async () => {
+      await press.close();
+      await db.close();
+    },
   };
 }

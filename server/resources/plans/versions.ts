@@ -2,6 +2,7 @@ import type { Transaction } from 'sequelize';
 import type { z } from 'zod';
 import type { publishRequest, PublishedPlan, Version } from '../../../shared/contracts/api';
 import type { PlanCall } from '../../../shared/contracts/plan';
+import { wordedCalls } from '../../../shared/domain/calendar/call-text';
 import { fileOf } from '../../../shared/domain/changes';
 import { callChanges } from '../../../shared/planner/callChanges';
 import type { Context } from '../../context';
@@ -66,13 +67,24 @@ export async function publish(
       },
       { transaction },
     );
-    const planned = plan.outcome.calls.map((call) => ({ call, personId: rows.idOf('people', call.person) ?? '', worded: false }));
+    const wordsBefore = last ? await wordsOf(context, last, transaction) : null;
+    const words = wordedCalls(file, plan.outcome);
+    const planned = plan.outcome.calls.map((call) => {
+      const key = `${call.person} ${call.date}`;
+      return { call, personId: rows.idOf('people', call.person) ?? '', worded: words.get(key) !== wordsBefore?.get(key) };
+    });
     await db.calls.bulkCreate(
       nextCalls(before, planned, now).map((call) => ({ ...call, productionId, versionId: version.id })),
       { transaction },
     );
     return presentVersion(version);
   });
+}
+
+/** What the calendars said of every call of a version. */
+async function wordsOf({ db }: Context, { file, planId }: VersionModel, transaction: Transaction): Promise<Map<string, string>> {
+  const { outcome } = await db.plans.findOne({ where: { id: planId }, rejectOnEmpty: true, transaction });
+  return wordedCalls(file, outcome);
 }
 
 const planCallOf = ({ date, arrive, ready, release, working, waiting }: Omit<PlanCall, 'person'>, person: string): PlanCall => ({

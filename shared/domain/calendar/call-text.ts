@@ -1,4 +1,4 @@
-import type { MadePlan, PlanCall } from '../../contracts/plan';
+import type { MadePlan, PlanCall, PlanOutcome } from '../../contracts/plan';
 import type { ProductionFile } from '../../contracts/resources';
 import type { PersonId } from '../flavours';
 import { callFacts } from '../sheets/call-facts';
@@ -30,6 +30,17 @@ function describe(day: CallDay, facts: readonly CallFact[]): string {
 
 export function summaryOf(file: ProductionFile): string {
   return `${file.production.title}: call`;
+}
+
+/** The words of every call of a plan, by person and date, as one string each: what differs was worded anew. */
+export function wordedCalls(file: ProductionFile, plan: PlanOutcome): Map<string, string> {
+  if (plan.cost === null) return new Map();
+  const people = [...new Set(plan.calls.map((call) => call.person))];
+  return new Map(
+    people.flatMap((person) =>
+      callTexts(file, plan, person).map(({ call, text }): [string, string] => [`${person} ${call.date}`, JSON.stringify(text)]),
+    ),
+  );
 }
 
 /** The words of every call of one person. */

@@ -1,6 +1,7 @@
 import type { ItemKind } from '../../contracts/plan';
 import type { ProductionFile } from '../../contracts/resources';
 import type { PlanDay } from '../../planner/day';
+import { toWall } from '../../time/wall';
 import { clock, dayWords } from '../../time/words';
 import type { Minutes, WallDate, WallTime } from '../flavours';
 
@@ -13,6 +14,11 @@ export interface SheetEdition {
   version: number | null;
   /** Wall clock of the production when the sheet was made. */
   printed: WallTime;
+}
+
+/** The wall clock of a zone at a moment given in milliseconds since 1970, to the minute. */
+export function wallAt(milliseconds: number, timezone: string): WallTime {
+  return toWall(Math.floor(milliseconds / 60_000), timezone);
 }
 
 /** What stands at the top of every page. */
