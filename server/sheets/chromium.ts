@@ -28,7 +28,7 @@ const PROFILE = 'redpoll-print-';
 
 /** The Chromium to print with: the one that was asked for, else the first of Debian's that is there. */
 export function findChromium(asked: string | undefined): string | null {
-  return asked ?? PLACES.find((place) => existsSync(place)) ?? null;
+  return (asked === undefined ? PLACES : [asked]).find((place) => existsSync(place)) ?? null;
 }
 
 function isAlive(pid: number): boolean {

@@ -8,7 +8,7 @@ import { type Paper, type SheetEdition, wallAt } from '../../../shared/domain/sh
 import type { Context } from '../../context';
 import type { Membership } from '../../http/actor';
 import { Refusal } from '../../http/errors';
-import { BusyError, NoBrowserError } from '../../sheets/pdf';
+import { BusyError, NoBrowserError, PrintError } from '../../sheets/pdf';
 import { printablePlan } from '../plans/published';
 
 export interface PrintedSheet {
@@ -44,11 +44,15 @@ async function printable(context: Context, member: Membership, asked: Asked): Pr
 }
 
 /** Prints, and says in words what is missing where it cannot be done. */
-async function printed(work: Promise<Uint8Array>): Promise<Uint8Array> {
+async function printed({ log }: Context, work: Promise<Uint8Array>): Promise<Uint8Array> {
   try {
     return await work;
   } catch (error) {
     if (error instanceof NoBrowserError || error instanceof BusyError) throw new Refusal('cannot-print', error.message);
+    if (error instanceof PrintError) {
+      log.error({ err: error }, 'a sheet could not be printed');
+      throw new Refusal('cannot-print', 'The sheet could not be printed this time. Try again; if it stays so, start Redpoll again.');
+    }
     throw error;
   }
 }
@@ -64,7 +68,7 @@ export async function printRunSheet(
   if (!sheet) throw new Refusal('not-found', 'This plan uses no such room on that date. Choose one of the days on the page Sheets.');
   const { code } = file.production;
   const name = documentName({ code, version: edition.version, date, ...(room === undefined ? {} : { room }) }, 'RUN-SHEET.pdf');
-  return { name, content: await printed(context.press.runSheet(sheet)) };
+  return { name, content: await printed(context, context.press.runSheet(sheet)) };
 }
 
 /** Who may not print everything prints the call sheet of their own, from a published version. */
@@ -84,5 +88,5 @@ export async function printCallSheet(context: Context, member: Membership, asked
   const sheet = callSheet(file, plan, { person, edition, ...(asked.paper === undefined ? {} : { paper: asked.paper }) });
   if (!sheet) throw new Refusal('not-found', 'This plan does not call that person. Choose one of the people on the page Sheets.');
   const name = documentName({ code: file.production.code, version: edition.version, person }, 'CALL-SHEET.pdf');
-  return { name, content: await printed(context.press.callSheet(sheet)) };
+  return { name, content: await printed(context, context.press.callSheet(sheet)) };
 }
