@@ -13,3 +13,6 @@ import { createAppRouter } from './router';
 z.config({ jitless: true });
 
 createApp(App).use(createPinia()).use(createAppRouter()).mount('#app');
+
+// The device keeps the app's files, so that it opens without the server.
+if (import.meta.env.PROD && 'serviceWorker' in navigator) void navigator.serviceWorker.register('/sw.js');
