@@ -54,10 +54,12 @@ export interface PlanDay {
   hours: { at: Minute; label: string }[];
   items: DayItem[];
   threads: DayThread[];
-  /** Length of the shortest item of the whole plan, so that all its days are drawn to one scale. */
+  /** Length of the shortest item of the whole plan that has to be named, so that all its days are drawn to one scale. */
   shortest: Minutes;
 }
 
+/** Kinds whose items cannot be told by their shape alone. */
+const NAMED: ReadonlySet<ItemKind> = new Set(['pass', 'listen', 'rig', 'changeover', 'event']);
 const HOUR: Minutes = 60;
 /** How much of a room's idle hours is drawn before the first and after the last item. */
 const MARGIN: Minutes = 60;
@@ -93,7 +95,7 @@ export function planDays(file: ProductionFile, plan: { items: readonly PlanItem[
   const used = spans.filter((_, index) => byDate.get(dates[index]!)!.length > 0);
   const first = Math.min(...(used.length > 0 ? used : spans).map(({ start }) => start));
   const length = Math.max(HOUR, ...(used.length > 0 ? used : spans).map(({ midnight, to }) => to - midnight - first));
-  const shortest = Math.min(...timed.filter(({ room, from, to }) => room !== undefined && from < to).map(({ from, to }) => to - from));
+  const shortest = Math.min(...timed.filter(({ kind, from, to }) => NAMED.has(kind) && from < to).map(({ from, to }) => to - from));
 
   return dates.map((date, index): PlanDay => {
     const items = byDate.get(date)!.sort((a, b) => a.from - b.from || a.to - b.to);

@@ -8,8 +8,6 @@ export interface ArrangedDay {
 }
 
 export const DAY_GAP = 22;
-/** What a day needs beyond the least, to be read with ease. */
-const EASE = 18;
 const MOST = { firstRoom: 440, room: 150 };
 /** A day without work is only words. */
 const EMPTY = 150;
@@ -18,7 +16,7 @@ export const isEmpty = (day: PlanDay): boolean => day.items.length === 0;
 
 function wanted(day: PlanDay, width: number): { least: number; most: number } {
   if (isEmpty(day)) return { least: EMPTY, most: EMPTY };
-  const least = Math.min(width, leastWidth(day, 'screen') + EASE);
+  const least = Math.min(width, leastWidth(day, 'screen'));
   return { least, most: Math.max(least, MOST.firstRoom + (columns(day).length - 1) * MOST.room) };
 }
 
