@@ -21,7 +21,7 @@ export function dropFact(file: ProductionFile, fact: string): ProductionFile {
   const lists = file as unknown as Record<string, { id: string }[]>;
   const found = lists[list]?.find?.((one) => one.id === id) as Record<string, unknown> | undefined;
   if (list === 'rules') file.production.rules = { ...file.production.rules, [id]: FREE[id as keyof Rules] };
-  else if (list === 'rooms' && field === 'open') found!.open = aroundTheClock();
+  else if (list === 'rooms' && field === 'open') found!.open = aroundTheClock(file);
   else if (field === 'count') found!.count = 1000;
   else if (field !== undefined) delete found![field];
   else lists[list] = lists[list]!.filter((one) => one.id !== id);
@@ -30,14 +30,18 @@ export function dropFact(file: ProductionFile, fact: string): ProductionFile {
   return file;
 }
 
-function aroundTheClock() {
-  return [
-    { from: '2027-03-01T00:00', to: '2027-03-08T00:00' },
-    ...['08', '09', '10', '11', '12'].map((day) => ({
-      from: `2027-03-${day}T00:00`,
-      to: `2027-03-${String(Number(day) + 1).padStart(2, '0')}T00:00`,
-    })),
-  ];
+/** A window for each day, from midnight to midnight, from the day before the first that the file speaks of to the day after the last. */
+function aroundTheClock(file: ProductionFile) {
+  const dates = [...JSON.stringify(file).matchAll(/\d{4}-\d\d-\d\d/g)].map(([date]) => date).sort();
+  const end = dayFrom(dates.at(-1)!, 2);
+  const windows = [];
+  for (let date = dayFrom(dates[0]!, -1); date < end; date = dayFrom(date, 1))
+    windows.push({ from: `${date}T00:00`, to: `${dayFrom(date, 1)}T00:00` });
+  return windows;
+}
+
+function dayFrom(date: string, days: number): string {
+  return new Date(Date.parse(`${date}T00:00Z`) + days * 86_400_000).toISOString().slice(0, 10);
 }
 
 function forgetPass(pass: Pass, id: string): void {

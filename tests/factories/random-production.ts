@@ -1,249 +1,213 @@
-import fc from 'fast-check';
-import type { ExtraField, ProductionFile } from '../../shared/contracts/resources';
-import { unprintableAt } from '../../shared/contracts/values';
+import type { Pass, Person, ProductionFile, Room, Rules, SessionEvent, Setup } from '../../shared/contracts/resources';
+import { Random } from '../../shared/solver/search/random';
+import { toMinute, toWall } from '../../shared/time/wall';
 
-/** Random productions that the reader accepts: every kind of row, references that hold, and texts that YAML could misread. */
+/** Zones and first days: two ordinary ones, and three in whose night the clock is changed, once by half an hour. */
+const PLACES = [
+  ['Europe/Lisbon', '2027-03-08'],
+  ['America/New_York', '2027-06-01'],
+  ['Europe/Berlin', '2027-03-26'],
+  ['Europe/Berlin', '2027-10-29'],
+  ['Australia/Lord_Howe', '2027-04-02'],
+] as const;
 
-// prettier-ignore
-const AWKWARD = [
-  '007', '1e3', '0x1f', '0o17', '.inf', '-.5', 'true', 'null', '~', 'yes', '- a', '# c', 'a: b', 'a #b', '2027-03-08', '2027-03-08T10:00',
-  '4/4', '  before', 'after  ', '"quoted"', "'quoted'", '{x}', '[x]', '*a', '&a', '!t', '|', '>', '%a', '@a', '`a', '---', '...', '<<', '=', '?', '? a',
-  ',', 'two\nlines', 'ends\n', '\n', ' \n ', 'a\n\n\nb\n', '\ttab', 'cr\r\nlf', 'cr\ralone', 'line\u2028paragraph\u2029', '\uFEFFmark', 'שלום ספינה', '\u202Eאבג',
-  '🎺 horns 👩‍🎤', '長い曲名', 'B♭m', 'x'.repeat(100), '__proto__', 'constructor', '',
-];
-
-const printable = (value: string) => unprintableAt(value) < 0;
-const word = fc
-  .oneof(fc.constantFrom(...AWKWARD), fc.string({ unit: 'grapheme', maxLength: 30 }), fc.string({ maxLength: 30 }))
-  .filter(printable);
-const shortWord = word.filter((value) => value.length <= 40);
-const optional = <Value>(value: fc.Arbitrary<Value>) => fc.option(value, { nil: undefined });
-
-/** Drops fields that were drawn as absent, so that an absent field is not there at all. */
-function given<Fields extends object>(fields: fc.Arbitrary<Fields>): fc.Arbitrary<Fields> {
-  return fields.map((drawn) => Object.fromEntries(Object.entries(drawn).filter(([, value]) => value !== undefined)) as Fields);
-}
-const ids = (name: string, most: number) =>
-  fc.integer({ min: 0, max: most }).map((count) => Array.from({ length: count }, (_, index) => `${name}${index}`));
-const some = <Value>(values: Value[]) => fc.subarray(values);
-const oneOf = (names: string[]) => (names.length > 0 ? optional(fc.constantFrom(...names)) : fc.constant(undefined));
-const each = <Value>(names: string[], make: (name: string) => fc.Arbitrary<Value>) => fc.tuple(...names.map(make));
-
-const day = fc.integer({ min: 1, max: 27 }).map((of) => `2027-05-${String(of).padStart(2, '0')}`);
-const hour = (least: number, most: number) => fc.integer({ min: least, max: most }).map((of) => String(of).padStart(2, '0'));
-const window = fc
-  .tuple(day, hour(0, 11), hour(12, 23), fc.constantFrom('00', '15', '59'))
-  .map(([date, from, to, minutes]) => ({ from: `${date}T${from}:${minutes}`, to: `${date}T${to}:${minutes}` }));
-const openWindows = fc.uniqueArray(window, { maxLength: 4, selector: ({ from }) => from.slice(0, 10) });
-const oneMinutes = fc.integer({ min: 1, max: 300 });
-const minutes = fc.oneof(
-  oneMinutes,
-  fc.tuple(oneMinutes),
-  fc.tuple(oneMinutes, oneMinutes, oneMinutes).map(([a, b, c]): [number, number, number] => {
-    const [low = a, likely = b, high = c] = [a, b, c].sort((x, y) => x - y);
-    return [low, likely, high];
-  }),
-);
-const amount = fc.oneof(
-  fc.integer({ min: 0, max: 5000 }),
-  fc.double({ min: 0, max: 1e6, noNaN: true }).filter((value) => !Object.is(value, -0)),
-);
-const whole = (least = 0) => fc.integer({ min: least, max: 100_000 });
-const importance = fc.constantFrom('must' as const, 'should' as const, 'nice' as const);
-
-/** A value that JSON and the reader both take: no control characters, no minus zero. */
-const json = fc
-  .jsonValue({ maxDepth: 2 })
-  .map((value): unknown => JSON.parse(JSON.stringify(value)))
-  .filter((value) => !/\\(u[0-9a-f]{4}|[bf])/.test(JSON.stringify(value)) && printable(JSON.stringify(value)));
-// A name that looks like a list position would come first in every JavaScript object; order is no matter of the file.
-const unknownKey = fc.constantFrom('mood', 'tea time', 'true', 'extra', 'constructor', '__proto__', 'מצב');
-/** Unknown fields at the given places, each name once, in the order in which the reader meets them. */
-const unknown = (...places: string[][]) =>
-  optional(
-    fc
-      .uniqueArray(fc.record({ owner: fc.nat(places.length - 1), key: unknownKey, value: json }), {
-        minLength: 1,
-        maxLength: 3,
-        selector: ({ owner, key }) => `${owner}/${key}`,
-      })
-      .map((fields) =>
-        fields
-          .sort((a, b) => a.owner - b.owner)
-          .map(({ owner, key, value }): ExtraField => ({ path: [...(places[owner] ?? []), key], value })),
-      ),
-  );
-const extra = unknown([]);
-
-interface Names {
-  rooms: string[];
-  people: string[];
-  gear: string[];
-  setups: string[];
-  songs: string[];
-  passes: string[];
-  events: string[];
+/** Draws of one seed, in words. */
+class Draw extends Random {
+  chance(percent: number): boolean {
+    return this.below(100) < percent;
+  }
+  from<Value>(values: readonly Value[]): Value {
+    return values[this.below(values.length)]!;
+  }
+  between(least: number, most: number): number {
+    return least + this.below(most - least + 1);
+  }
+  some<Value>(values: readonly Value[], percent: number): Value[] {
+    return values.filter(() => this.chance(percent));
+  }
 }
 
-const minutesOf = (people: string[]) =>
-  some(people).chain((names) =>
-    each(names, () => whole()).map((drawn) => Object.fromEntries(names.map((name, at) => [name, drawn[at] ?? 0]))),
-  );
-const usesOf = (names: string[]) =>
-  some(names).chain((gear) => each(gear, (id) => given(fc.record({ gear: fc.constant(id), count: optional(whole(1)) }))));
+interface Scene {
+  draw: Draw;
+  zone: string;
+  /** Midnight of each day, in elapsed minutes. */
+  days: number[];
+}
 
-const production = given(
-  fc.record({
-    code: fc.constantFrom('SLUICE', '007', 'A B', '№ 1'),
-    title: word.filter((value) => value.trim() !== ''),
-    timezone: fc.constantFrom('Europe/Lisbon', 'Asia/Kathmandu', 'UTC', 'America/St_Johns'),
-    currency: optional(fc.constantFrom('EUR', 'USD')),
-    pitch: optional(fc.constantFrom(440, 442, 415.3)),
-    recording: optional(given(fc.record({ rate: optional(fc.constant(48000)), bits: optional(fc.constant(24)) }))),
-    paper: optional(fc.constantFrom('A4' as const, 'Letter' as const)),
-    place: optional(given(fc.record({ name: optional(word), address: optional(word) }))),
-    late: optional(word),
-    note: optional(word),
-    rules: optional(given(fc.record({ step: optional(whole(1)), reserve: optional(amount), oneRoomPerSong: optional(fc.boolean()) }))),
-    weights: optional(given(fc.record({ waiting: optional(amount), day: optional(amount) }))),
-    extra: unknown([], ['production']),
-  }),
-);
+/** A wall time so many minutes after the midnight of a day; moved out of the hour that the spring night skips. */
+function wall({ zone }: Scene, midnight: number, minutes: number): string {
+  return toWall(midnight + minutes, zone);
+}
 
-const roomOf = (id: string, names: Names) =>
-  given(
-    fc.record({
-      id: fc.constant(id),
-      name: optional(word),
-      size: optional(fc.constant<[number, number, number]>([9, 7.5, 3.2])),
-      people: optional(whole(1)),
-      standing: optional(fc.boolean()),
-      open: openWindows,
-      loud: optional(fc.array(window, { maxLength: 2 })),
-      hears: optional(some(names.rooms.filter((other) => other !== id))),
-      operators: optional(some(names.people)),
-      price: optional(given(fc.record({ day: optional(amount), overtimeHour: optional(amount) }))),
-      note: optional(word),
-      extra,
-    }),
-  );
-const personOf = (id: string) =>
-  given(
-    fc.record({
-      id: fc.constant(id),
-      name: optional(word),
-      plays: optional(fc.array(word, { maxLength: 3 })),
-      crew: optional(fc.boolean()),
-      windows: optional(
-        fc.array(
-          fc.tuple(window, fc.boolean()).map(([hours, sure]) => ({ ...hours, sure })),
-          { maxLength: 3 },
-        ),
-      ),
-      limits: optional(given(fc.record({ voice: optional(whole()), day: optional(whole()) }))),
-      away: optional(whole()),
-      fee: optional(given(fc.record({ waiting: optional(amount), call: optional(amount), perHour: optional(amount) }))),
-      bring: optional(fc.array(word, { maxLength: 3 })),
-      extra,
-    }),
-  );
-const gearOf = (id: string) => given(fc.record({ id: fc.constant(id), name: optional(word), count: optional(whole(1)), extra }));
-const setupOf = (id: string, names: Names) =>
-  given(
-    fc.record({
-      id: fc.constant(id),
-      name: optional(word),
-      room: fc.constant(names.rooms[0]),
-      rig: optional(whole()),
-      ready: optional(minutesOf(names.people)),
-      keepUntil: optional(fc.constant('approved' as const)),
-      extra,
-    }),
-  );
-const changeoverTo = (to: string) => given(fc.record({ from: fc.constant('setup0'), to: fc.constant(to), minutes: whole(), extra }));
-const partOf = (id: string, names: Names) =>
-  given(
-    fc.record({
-      id: fc.constant(id),
-      players: optional(some(names.people)),
-      mode: optional(fc.constantFrom('live' as const, 'guide' as const, 'overdub' as const, 'stack' as const)),
-      instrument: optional(word),
-      minutes: optional(minutes),
-      priority: optional(importance),
-      needs: optional(fc.array(word, { maxLength: 2 })),
-      uses: optional(usesOf(names.gear)),
-      pan: optional(fc.constantFrom(-1, -0.25, 0, 1)),
-      extra,
-    }),
-  );
-const songOf = (id: string, names: Names) =>
-  given(
-    fc.record({
-      id: fc.constant(id),
-      title: optional(word),
-      length: optional(fc.constantFrom(4.2, 3)),
-      key: optional(shortWord),
-      click: optional(fc.boolean()),
-      form: optional(word),
-      rehearsal: optional(fc.integer({ min: 0, max: 4 })),
-      setup: oneOf(names.setups),
-      parts: optional(ids('part', 3).chain((parts) => each(parts, (part) => partOf(part, names)))),
-      extra,
-    }),
-  );
-const passOf = (id: string, names: Names) => {
-  const others = names.passes.filter((other) => other !== id);
-  return given(
-    fc.record({
-      id: fc.constant(id),
-      name: optional(word),
-      song: oneOf(names.songs),
-      people: optional(some(names.people)),
-      room: fc.constant(names.rooms[0]),
-      setup: oneOf(names.setups),
-      minutes,
-      priority: optional(importance),
-      loud: optional(fc.boolean()),
-      voice: optional(minutesOf(names.people)),
-      uses: optional(usesOf(names.gear)),
-      after: optional(some(others).map((passes) => passes.map((pass) => ({ pass, kind: 'approved' as const, lag: 5 })))),
-      before: optional(some(names.events).map((events) => events.map((event) => ({ event })))),
-      together: optional(some(others)),
-      pin: optional(day.map((of) => ({ day: of }))),
-      extra,
-    }),
-  );
-};
-const eventOf = (id: string, names: Names) =>
-  given(
-    fc
-      .tuple(window, fc.record({ name: optional(word), kind: optional(shortWord), people: optional(some(names.people)), extra }))
-      .map(([{ from, to }, rest]) => ({ id, ...rest, from, to })),
-  );
+/**
+ * A small random production that uses every field the planner reads, the same for the same seed. Not every one can be planned.
+ * @param size most passes in it
+ */
+export function randomProduction(seed: number, size = 9): ProductionFile {
+  const draw = new Draw(seed);
+  const [zone, first] = draw.chance(70) ? PLACES[draw.below(2)]! : draw.from(PLACES);
+  const noon = toMinute(`${first}T12:00`, zone);
+  const days = Array.from({ length: draw.between(1, 4) }, (_, i) => toMinute(`${toWall(noon + i * 1440, zone).slice(0, 10)}T00:00`, zone));
+  const scene: Scene = { draw, zone, days };
+  const people = Array.from({ length: draw.between(2, 5) }, (_, i) => randomPerson(scene, `p${i}`));
+  const rooms = Array.from({ length: draw.between(1, 2) }, (_, i) => randomRoom(scene, 'ab'[i]!, people));
+  const setups = Array.from({ length: draw.below(4) }, (_, i) => randomSetup(scene, `u${i}`, rooms, people));
+  const songs = Array.from({ length: draw.between(1, 4) }, (_, i) => ({
+    id: `s${i}`,
+    ...(draw.chance(30) && { priority: draw.from(['must', 'should', 'nice'] as const) }),
+  }));
+  const gear = draw.chance(40)
+    ? [{ id: 'organ', count: draw.between(1, 2), ...(draw.chance(50) && { windows: windowsOf(scene, 70) }) }]
+    : [];
+  const events = Array.from({ length: draw.below(3) }, (_, i) => randomEvent(scene, `e${i}`, rooms, people));
+  const passes: Pass[] = [];
+  for (let i = draw.between(1, size); i > 0; i--)
+    passes.push(randomPass(scene, `x${passes.length}`, { people, rooms, setups, songs, gear, events, passes }));
+  return {
+    production: {
+      code: 'RND',
+      title: `Random ${seed}`,
+      timezone: zone,
+      rules: randomRules(draw),
+      ...(draw.chance(30) && { weights: { waiting: draw.between(0, 3), day: draw.between(0, 200) } }),
+    },
+    rooms,
+    people,
+    gear,
+    setups,
+    changeovers: setups.flatMap(({ id }) =>
+      draw.some(setups, 60).flatMap((to) => (to.id === id ? [] : [{ from: id, to: to.id, minutes: draw.between(0, 9) * 7 }])),
+    ),
+    songs,
+    passes,
+    events,
+  };
+}
 
-const names: fc.Arbitrary<Names> = fc.record({
-  rooms: ids('room', 2).map((rooms) => ['hall', ...rooms]),
-  people: ids('person', 4),
-  gear: ids('gear', 2),
-  setups: ids('setup', 3),
-  songs: ids('song', 3),
-  passes: ids('pass', 4),
-  events: ids('event', 2),
-});
+function randomRules(draw: Draw): Rules {
+  const rules: Rules = {};
+  if (draw.chance(50)) rules.step = draw.from([5, 10, 15, 20]);
+  if (draw.chance(20)) rules.meal = 0;
+  if (draw.chance(20)) rules.mealAfter = draw.between(16, 30) * 10;
+  if (draw.chance(20)) rules.breakAfter = draw.from([0, 60, 90]);
+  if (draw.chance(30)) rules.wrap = draw.from([0, 20, 32]);
+  if (draw.chance(30)) rules.listen = draw.from([0, 20, 33]);
+  if (draw.chance(30)) rules.reserve = draw.from([0, 0.1, 0.3]);
+  if (draw.chance(30)) rules.turnaround = draw.from([0, 600, 900]);
+  if (draw.chance(30)) rules.changeover = draw.from([0, 15, 22]);
+  if (draw.chance(20)) rules.oneRoomPerSong = false;
+  return rules;
+}
 
-/** A whole random production. */
-export const randomProduction: fc.Arbitrary<ProductionFile> = names.chain((all) =>
-  given(
-    fc.record({
-      production,
-      rooms: each(all.rooms, (id) => roomOf(id, all)),
-      people: each(all.people, personOf),
-      gear: each(all.gear, gearOf),
-      setups: each(all.setups, (id) => setupOf(id, all)),
-      changeovers: each(all.setups.slice(1), changeoverTo),
-      songs: each(all.songs, (id) => songOf(id, all)),
-      passes: optional(each(all.passes, (id) => passOf(id, all))),
-      events: each(all.events, (id) => eventOf(id, all)),
+function randomRoom(scene: Scene, id: string, people: readonly Person[]): Room {
+  const { draw, days } = scene;
+  const open = days.flatMap((midnight) => {
+    if (draw.chance(10)) return [];
+    const from = draw.from([540, 600, 605, 840]);
+    const to = draw.chance(15) ? 1560 : draw.from([1080, 1200, 1320]);
+    const window = { from: wall(scene, midnight, from), to: wall(scene, midnight, to) };
+    if (!draw.chance(15) || from > 600) return [window];
+    return [
+      { from: window.from, to: wall(scene, midnight, 840) },
+      { from: wall(scene, midnight, draw.from([840, 900])), to: window.to },
+    ];
+  });
+  return {
+    id,
+    open: open.length > 0 ? open : [{ from: wall(scene, days[0]!, 600), to: wall(scene, days[0]!, 1200) }],
+    ...(draw.chance(25) && { standing: false }),
+    ...(draw.chance(40) && { standard: draw.from([0, 300, 480]) }),
+    ...(draw.chance(20) && { people: draw.between(2, 6) }),
+    ...(draw.chance(25) && { loud: windowsOf(scene, 90) }),
+    ...(draw.chance(40) && { hears: ['b'] }),
+    ...(draw.chance(25) && { operators: [people[0]!.id] }),
+  };
+}
+
+/** A window on most days. */
+function windowsOf(scene: Scene, percent: number): { from: string; to: string }[] {
+  const { draw, days } = scene;
+  return draw.some(days, percent).map((midnight) => ({
+    from: wall(scene, midnight, draw.from([540, 600, 720, 780])),
+    to: wall(scene, midnight, draw.from([1020, 1140, 1260, 1380, 1500])),
+  }));
+}
+
+function randomPerson(scene: Scene, id: string): Person {
+  const { draw } = scene;
+  const windows = windowsOf(scene, 90).map((window) => ({ ...window, ...(draw.chance(25) && { sure: false }) }));
+  return {
+    id,
+    ...(draw.chance(40) && { windows }),
+    ...(draw.chance(25) && { limits: { voice: draw.from([60, 90]), day: draw.from([420, 600]) } }),
+    ...(draw.chance(30) && { away: draw.from([60, 120, 180]) }),
+    ...(draw.chance(15) && { size: 2 }),
+    ...(draw.chance(30) && { fee: { waiting: draw.from([0, 0.5, 2]) } }),
+  };
+}
+
+function randomSetup(scene: Scene, id: string, rooms: readonly Room[], people: readonly Person[]): Setup {
+  const { draw } = scene;
+  const ready = Object.fromEntries(draw.some(people, 30).map((person) => [person.id, draw.between(1, 8) * 9]));
+  return {
+    id,
+    room: draw.from(rooms).id,
+    rig: draw.from([0, 30, 65, 90]),
+    ...(draw.chance(60) && { ready }),
+    ...(draw.chance(25) && { keepUntil: 'approved' as const }),
+  };
+}
+
+function randomEvent(scene: Scene, id: string, rooms: readonly Room[], people: readonly Person[]): SessionEvent {
+  const { draw, days } = scene;
+  const midnight = draw.from(days);
+  const from = draw.between(50, 120) * 10;
+  return {
+    id,
+    kind: draw.from(['tuner', 'listen', 'delivery']),
+    from: wall(scene, midnight, from),
+    to: wall(scene, midnight, from + draw.from([15, 30, 60])),
+    ...(draw.chance(60) && { room: draw.from(rooms).id }),
+    ...(draw.chance(40) && { people: draw.some(people, 30).map((person) => person.id) }),
+  };
+}
+
+type Lists = Pick<ProductionFile, 'people' | 'rooms' | 'setups' | 'songs' | 'gear' | 'events'> & { passes: Pass[] };
+
+function randomPass(scene: Scene, id: string, { people, rooms, setups, songs, gear, events, passes }: Lists): Pass {
+  const { draw, days } = scene;
+  const room = draw.from(rooms).id;
+  const fitting = setups.filter((setup) => setup.room === room);
+  const cast = draw.some(people, 45).map((person) => person.id);
+  const likely = draw.between(2, 16) * 6;
+  const earlier = draw.some(passes, 15);
+  return {
+    id,
+    room,
+    people: cast,
+    minutes: draw.chance(50) ? likely : [Math.ceil(likely / 2), likely, likely * 2],
+    ...(draw.chance(70) && { song: draw.from(songs).id }),
+    ...(fitting.length > 0 && draw.chance(70) && { setup: draw.from(fitting).id }),
+    ...(draw.chance(40) && { priority: draw.from(['must', 'should', 'nice'] as const) }),
+    ...(draw.chance(25) && { loud: true }),
+    ...(draw.chance(15) && { quiet: true }),
+    ...(cast.length > 0 && draw.chance(30) && { voice: { [cast[0]!]: draw.between(1, 5) * 10 } }),
+    ...(gear.length > 0 && draw.chance(40) && { uses: [{ gear: 'organ' }] }),
+    ...(draw.chance(50) && {
+      after: [
+        ...earlier.map((pass) => ({
+          pass: pass.id,
+          ...(draw.chance(40) && { kind: 'approved' as const }),
+          ...(draw.chance(30) && { lag: draw.between(1, 9) * 7 }),
+        })),
+        ...draw.some(events, 15).map((event) => ({ event: event.id })),
+      ],
     }),
-  ),
-);
+    ...(draw.chance(10) && { before: draw.some(events, 50).map((event) => ({ event: event.id })) }),
+    ...(passes.length > 0 && draw.chance(6) && { together: [draw.from(passes).id] }),
+    ...(passes.length > 0 && draw.chance(10) && { apart: [draw.from(passes).id] }),
+    ...(draw.chance(10) && { pin: { day: wall(scene, draw.from(days), 720).slice(0, 10) } }),
+    ...(draw.chance(5) && { pin: { notBefore: wall(scene, draw.from(days), 780) } }),
+    ...(draw.chance(4) && { leftOut: true }),
+  };
+}

@@ -1,5 +1,6 @@
 import type { Minute, Minutes, RoomId, SetupId } from '../../domain/flavours';
 import type { Span } from '../model';
+import { mostOfRoomDay, type PauseRules } from '../pauses';
 import type { OpenWindow } from './statement';
 import { eventsThatHold, roundUp, ruleOf, type View } from './view';
 
@@ -34,17 +35,14 @@ export function leastEntry(view: View, setup: SetupId): Minutes {
   return others.reduce((least, other) => Math.min(least, changeoverBetween(view, other, setup)), rig);
 }
 
-/**
- * The least minutes of pauses among so many minutes of work that follow each other in one room-day. Stretches of work between meals last
- * at most `mealAfter`; those between breaks at most `breakAfter`, or as long as the longest single item, which may stand alone.
- */
-export function leastPauses(view: View, work: Minutes, longest: Minutes): Minutes {
-  const meal = ruleOf(view, 'meal');
-  const pause = ruleOf(view, 'break');
-  const breakAfter = ruleOf(view, 'breakAfter');
-  const mealGaps = meal > 0 ? Math.max(0, Math.ceil(work / ruleOf(view, 'mealAfter')) - 1) : 0;
-  const breakGaps = breakAfter > 0 && pause > 0 ? Math.max(0, Math.ceil(work / Math.max(breakAfter, longest)) - 1) : 0;
-  return mealGaps * meal + Math.max(0, breakGaps - mealGaps) * pause;
+/** The rules of meals and breaks that hold. */
+export function pauseRules(view: View): PauseRules {
+  return {
+    meal: ruleOf(view, 'meal'),
+    mealAfter: ruleOf(view, 'mealAfter'),
+    break: ruleOf(view, 'break'),
+    breakAfter: ruleOf(view, 'breakAfter'),
+  };
 }
 
 /** Minutes of events that block the room within a stretch. */
@@ -64,17 +62,7 @@ export function eventMinutes(view: View, room: RoomId, within: Span): Minutes {
 
 /** The most minutes of work, wrap included, that a window holds beside its events and the pauses that so much work asks for. */
 export function mostWork(view: View, room: RoomId, window: OpenWindow, longest: Minutes): Minutes {
-  const length = window.to - window.from;
-  const blocked = eventMinutes(view, room, window);
-  const fits = (work: Minutes) => work + Math.max(blocked, leastPauses(view, work, longest)) <= length;
-  let least = 0;
-  let most = length - blocked + 1;
-  while (most - least > 1) {
-    const middle = Math.floor((least + most) / 2);
-    if (fits(middle)) least = middle;
-    else most = middle;
-  }
-  return least;
+  return mostOfRoomDay(pauseRules(view), window.to - window.from, eventMinutes(view, room, window), longest);
 }
 
 /** Reserve that so many pass minutes in one room-day ask for. */

@@ -2,7 +2,7 @@ import type { Pass } from '../../contracts/resources';
 import type { Minute, Minutes, WallDate } from '../../domain/flavours';
 import { EVER, merged, NEVER, type Span } from '../model';
 import { buildFromBare, mostWork, reserveFor } from './days';
-import { common, without } from './spans';
+import { common, without } from '../spans';
 import type { OpenWindow } from './statement';
 import { castOf, eventsThatHold, fieldOf, minutesOf, roomIdOf, roundUp, ruleOf, type View } from './view';
 

@@ -139,21 +139,26 @@ export function stateFile(file: ProductionFile): Statement {
 function calendarOf(clock: ZoneClock, spans: readonly Span[]): CalendarDay[] {
   if (spans.length === 0) return [];
   const last = clock.dateOf(spans.reduce((latest, { to }) => Math.max(latest, to), -Infinity));
-  let at = spans.reduce((earliest, { from }) => Math.min(earliest, from), Infinity);
   const days: CalendarDay[] = [];
-  for (let date = clock.dateOf(at); date <= last; date = clock.dateOf(at)) {
-    const midnight = at - minuteOfDay(clock, at);
-    // A day with a clock change is longer or shorter than others: the next midnight is found from the noon after it.
-    const noon = midnight + 1440 + 720;
-    const next = noon - minuteOfDay(clock, noon);
-    days.push({ date, from: days.at(-1)?.to ?? midnight, to: next });
-    at = next;
+  for (let date = clock.dateOf(spans.reduce((earliest, { from }) => Math.min(earliest, from), Infinity)); date <= last;) {
+    const next = dayAfter(clock, date);
+    days.push({ date, from: beginningOf(clock, date), to: beginningOf(clock, next) });
+    date = next;
   }
   return days;
 }
 
-function minuteOfDay(clock: ZoneClock, minute: Minute): Minutes {
-  return (((minute + clock.offsetAt(minute)) % 1440) + 1440) % 1440;
+/** The first minute of a date. Some clocks are put forward at midnight; such a day begins at one. */
+function beginningOf(clock: ZoneClock, date: WallDate): Minute {
+  const midnight = clock.minuteOf(`${date}T00:00`);
+  const begin = midnight === 'gap' ? clock.minuteOf(`${date}T01:00`) : midnight;
+  if (begin === 'gap') throw new SkippedTimeError(`${date}T01:00`, clock.zone);
+  return begin;
+}
+
+/** No clock is put forward or back by as much as half a day, so a day and a half after it begins, the next day is on. */
+function dayAfter(clock: ZoneClock, date: WallDate): WallDate {
+  return clock.dateOf(beginningOf(clock, date) + 1440 + 720);
 }
 
 function windowsOf(room: Room, spanOf: (window: { from: WallTime; to: WallTime }) => Span): OpenWindow[] {

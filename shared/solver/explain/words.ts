@@ -76,7 +76,8 @@ export function factWords(statement: Statement, fact: string): string {
 function personFact(statement: Statement, id: string, field: string | undefined): string {
   const { person } = statement.people.get(id)!;
   const name = personWords(statement, id);
-  if (field === 'windows') return `${name} is free ${person.windows!.length > 0 ? 'only ' : ''}${windowsWords(person.windows!)}`;
+  if (field === 'windows')
+    return person.windows!.length > 0 ? `${name} is free only ${windowsWords(person.windows!)}` : `${name} is never free`;
   const { day, voice } = person.limits ?? {};
   const limits = [
     ...(day === undefined ? [] : [`is called for at most ${length(day)} a day`]),

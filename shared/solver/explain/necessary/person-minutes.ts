@@ -2,9 +2,11 @@ import type { Pass } from '../../../contracts/resources';
 import type { Minutes, PersonId, WallDate } from '../../../domain/flavours';
 import { merged, type Span } from '../../model';
 import type { NecessaryCondition } from '../condition';
+import { pauseRules } from '../days';
+import { mostOfDay } from '../../pauses';
 import { placesOf, type Place } from '../places';
-import { common, total, without } from '../spans';
-import { castOf, eventsThatHold, fieldOf, minutesOf, neededPasses, roomIdOf, ruleOf, type View } from '../view';
+import { common, total, without } from '../../spans';
+import { castOf, eventsThatHold, fieldOf, minutesOf, neededPasses, roomIdOf, type View } from '../view';
 import { personWords } from '../words';
 import { dayWords, length } from '../../../time/words';
 
@@ -64,21 +66,12 @@ function mostOnDate(view: View, person: PersonId, passes: readonly Pass[], date:
   const windows = facts.windows && view.has(`people.${person}.windows`) ? facts.windows : null;
   const most = (spans: readonly Span[]) => {
     if (spans.length === 0) return 0;
-    return Math.min(total(spans), mostOfStay(view, Math.min(day, spans.at(-1)!.to - spans[0]!.from)));
+    return Math.min(total(spans), mostOfDay(pauseRules(view), Math.min(day, spans.at(-1)!.to - spans[0]!.from)));
   };
   if (!windows) return most(free);
   // Without time off between, a day is one stay, and a stay lies in one window.
   if (facts.person.away === undefined) return Math.max(0, ...windows.map((window) => most(common(free, [window]))));
   return most(common(free, windows));
-}
-
-/** The most minutes of work in so long a stay: stretches of at most `mealAfter` with gaps of a meal between them. */
-function mostOfStay(view: View, stay: Minutes): Minutes {
-  const meal = ruleOf(view, 'meal');
-  const mealAfter = ruleOf(view, 'mealAfter');
-  if (meal === 0 || mealAfter === Infinity || stay <= mealAfter) return stay;
-  const rounds = Math.floor(stay / (mealAfter + meal));
-  return rounds * mealAfter + Math.min(mealAfter, stay - rounds * (mealAfter + meal));
 }
 
 /** Whether the voice minutes are more than all dates allow together, or more passes than dates take over half a day's voice each. */

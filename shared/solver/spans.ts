@@ -1,5 +1,5 @@
-import type { Minutes } from '../../domain/flavours';
-import type { Span } from '../model';
+import type { Minutes } from '../domain/flavours';
+import type { Span } from './model';
 
 /** What two lists of stretches, each merged and in order, share. */
 export function common(one: readonly Span[], other: readonly Span[]): Span[] {
