@@ -19,7 +19,7 @@ type Statuses = [number, number, number, number, number, number, number];
 interface Expectation {
   statuses: Statuses;
   /** Sends what would be right if whoever sends it may. */
-  send: (who: Agent, name: Who) => request.Test | Promise<request.Test>;
+  send: (who: Agent, name: Who) => request.Test | Promise<request.Response>;
 }
 
 const all = (status: number): Statuses => [status, status, status, status, status, status, status];

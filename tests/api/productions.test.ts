@@ -8,7 +8,7 @@ import { writeProductionFile } from '../../shared/file/write';
 import { loadStartingPoints } from '../../server/resources/starting-points/service';
 import { productionOf, someone, type Agent } from '../factories/accounts';
 import { smallProduction } from '../factories/productions';
-import { randomProduction } from '../factories/random-production';
+import { anyProduction } from '../factories/any-production';
 import { openApp, type OpenApp } from '../support/app';
 
 let open: OpenApp;
@@ -86,7 +86,7 @@ describe('the starting points', () => {
 describe('import and export', () => {
   it('give any production back as it was, fields that are not given and unknown ones too', async () => {
     await fc.assert(
-      fc.asyncProperty(randomProduction, async (file) => {
+      fc.asyncProperty(anyProduction, async (file) => {
         const id = await productionOf(producer, file);
         expect(read(await exportOf(id))).toEqual(file);
       }),

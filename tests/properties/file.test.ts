@@ -5,7 +5,7 @@ import { unprintableAt } from '../../shared/contracts/values';
 import { readProductionFile } from '../../shared/file/read';
 import { writeProductionFile } from '../../shared/file/write';
 import { effectivePasses } from '../../shared/planner/derive';
-import { randomProduction } from '../factories/random-production';
+import { anyProduction } from '../factories/any-production';
 
 const TEMPLATES = 'templates/productions';
 const templates = readdirSync(TEMPLATES).map((name) => readFileSync(`${TEMPLATES}/${name}`, 'utf8'));
@@ -14,7 +14,7 @@ const malformed = readdirSync('tests/fixtures/malformed').map((name) => readFile
 describe('writing and reading', () => {
   it('gives the same production, whatever its texts and unknown fields', () => {
     fc.assert(
-      fc.property(randomProduction, (file) => {
+      fc.property(anyProduction, (file) => {
         const text = writeProductionFile(file);
         const read = readProductionFile(text);
         if (!read.ok) expect.fail(JSON.stringify(read.faults));
@@ -27,7 +27,7 @@ describe('writing and reading', () => {
 
   it('gives the same production through JSON, as the database keeps it', () => {
     fc.assert(
-      fc.property(randomProduction, (file) => {
+      fc.property(anyProduction, (file) => {
         const kept = JSON.parse(JSON.stringify(file)) as typeof file;
         const read = readProductionFile(writeProductionFile(kept));
         expect(read.ok && read.file).toEqual(file);
@@ -38,7 +38,7 @@ describe('writing and reading', () => {
 
   it('derives passes of every production without fail, each with an own id', () => {
     fc.assert(
-      fc.property(randomProduction, (file) => {
+      fc.property(anyProduction, (file) => {
         const passes = effectivePasses(file);
         expect(new Set(passes.map((pass) => pass.id)).size).toBe(passes.length);
         for (const pass of passes) expect(pass.room).toBeDefined();
