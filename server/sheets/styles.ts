@@ -21,8 +21,10 @@ async function readFontCss(): Promise<string> {
   return (await Promise.all(rules)).join('\n');
 }
 
-/** Everything that a printed document needs to look right: its face and templates/print.css, which the preview uses too. */
+const SHEETS = ['print.css', 'print-run.css', 'print-call.css'];
+
+/** Everything that a printed document needs to look right: its face and the styles of templates/, which the preview uses too. */
 export async function readSheetStyles(): Promise<string> {
-  const [fonts, print] = await Promise.all([readFontCss(), readFile(path.join(process.cwd(), 'templates/print.css'), 'utf8')]);
-  return `${fonts}\n${print}`;
+  const styles = SHEETS.map((name) => readFile(path.join(process.cwd(), 'templates', name), 'utf8'));
+  return (await Promise.all([readFontCss(), ...styles])).join('\n');
 }

@@ -316,6 +316,19 @@ export interface ProductionFile {
   events: SessionEvent[];
 }
 
+/** A whole production as it goes over the wire where a plan is shown with what it was made from. */
+export const productionFile: z.ZodType<ProductionFile> = z.object({
+  production,
+  rooms: list(room),
+  people: list(person),
+  gear: list(gear),
+  setups: list(setup),
+  changeovers: list(changeover),
+  songs: list(song),
+  passes: list(pass).optional(),
+  events: list(event),
+});
+
 /** The kinds of rows that a change can name. Keys: the file's id; `from>to` for a changeover; `song/part` for a part; `production` for the head. */
 export const resourceNames = [
   'production',

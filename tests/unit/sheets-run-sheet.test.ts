@@ -16,6 +16,8 @@ describe('the run sheet of a day', () => {
   it('says which production, day, version and moment of printing it is', () => {
     const sheet = sheetOf(SHEET_DAYS.first);
     expect(sheet.head).toEqual({
+      what: 'Run sheet',
+      of: 'Mon 8 March 2027',
       code: 'SLUICE',
       title: 'Nine Sluices',
       paper: 'A4',

@@ -3,6 +3,7 @@ import { z } from 'zod';
 import { wallDate } from '../../../shared/contracts/values';
 import type { Context } from '../../context';
 import type { Routes } from '../../http/routes';
+import { sheetsPlanOf } from './shown';
 import { type PrintedSheet, printCallSheet, printRunSheet } from './service';
 
 const key = z.string().max(64, { error: 'an id' });
@@ -10,6 +11,7 @@ const asked = {
   version: z.string().max(60).optional(),
   paper: z.enum(['A4', 'Letter'], { error: 'A4 or Letter' }).optional(),
 };
+const planQuery = z.object({ version: asked.version });
 const runSheetQuery = z.object({ ...asked, date: wallDate, room: key.optional() });
 const callSheetQuery = z.object({ ...asked, person: key.optional() });
 
@@ -19,6 +21,10 @@ function sendPdf(response: Response, sheet: PrintedSheet): void {
 }
 
 export function sheetRoutes(routes: Routes, context: Context): void {
+  routes.member('get', '/api/productions/:production/sheets/plan', 'printOwn', {
+    query: planQuery,
+    run: ({ member, query }) => sheetsPlanOf(context, member, query.version),
+  });
   routes.member('get', '/api/productions/:production/sheets/run-sheet.pdf', 'print', {
     query: runSheetQuery,
     run: ({ member, query }) => printRunSheet(context, member, query),

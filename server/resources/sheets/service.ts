@@ -8,6 +8,7 @@ import { type Paper, type SheetEdition, wallAt } from '../../../shared/domain/sh
 import type { Context } from '../../context';
 import type { Membership } from '../../http/actor';
 import { Refusal } from '../../http/errors';
+import type { VersionModel } from '../../models/plans';
 import { BusyError, NoBrowserError, PrintError } from '../../sheets/pdf';
 import { printablePlan } from '../plans/published';
 
@@ -29,7 +30,7 @@ interface Printable {
 }
 
 async function newestVersion({ db }: Context, productionId: string): Promise<string> {
-  const newest: number | null = await db.versions.max('number', { where: { productionId } });
+  const newest = await db.versions.max<number | null, VersionModel>('number', { where: { productionId } });
   if (newest === null)
     throw new Refusal('not-found', 'Nothing is published yet. Publish a plan first, or print a draft from the page Sheets.');
   return String(newest);

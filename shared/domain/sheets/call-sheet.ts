@@ -29,11 +29,12 @@ export function callSheet(file: ProductionFile, plan: MadePlan, request: CallShe
   const days = callDays(file, plan, request.person);
   if (days.length === 0) return null;
   const person = namesOf(file).person(request.person);
-  const head = sheetHead(file, request.edition, request.paper);
+  const name = person?.name ?? person?.short ?? request.person;
+  const head = sheetHead(file, request, { what: 'Call sheet', of: name });
   return {
     head,
     person: request.person,
-    name: person?.name ?? person?.short ?? request.person,
+    name,
     plays: (person?.plays ?? []).join(', '),
     pages: callPages(
       days.map(({ day }) => day),

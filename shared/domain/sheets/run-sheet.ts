@@ -43,11 +43,11 @@ export function runSheet(file: ProductionFile, plan: MadePlan, request: RunSheet
   if (wanted.length === 0 || !threads) return null;
   const names = namesOf(file);
   const zone = zoneClock(file.production.timezone);
-  const head = sheetHead(file, request.edition, request.paper);
+  const head = sheetHead(file, request, { what: 'Run sheet', of: fullDate(request.date) });
   return {
     head,
     date: request.date,
-    day: fullDate(request.date),
+    day: head.of,
     count: dayCount(request.date, usedDates(file, plan.items)),
     rooms: wanted.map((day): RunRoom => {
       const rows = day.items.map((item) => ({ item, row: rowOf(item, day, all, names, zone) }));

@@ -23,6 +23,9 @@ export function wallAt(milliseconds: number, timezone: string): WallTime {
 
 /** What stands at the top of every page. */
 export interface SheetHead {
+  what: 'Run sheet' | 'Call sheet';
+  /** The day of a run sheet, the name on a call sheet. */
+  of: string;
   code: string;
   title: string;
   paper: Paper;
@@ -33,9 +36,15 @@ export interface SheetHead {
   printed: string;
 }
 
-export function sheetHead(file: ProductionFile, edition: SheetEdition, paper?: Paper): SheetHead {
+export function sheetHead(
+  file: ProductionFile,
+  { edition, paper }: { edition: SheetEdition; paper?: Paper },
+  { what, of }: Pick<SheetHead, 'what' | 'of'>,
+): SheetHead {
   const { code, title } = file.production;
   return {
+    what,
+    of,
     code,
     title,
     paper: paper ?? file.production.paper ?? 'A4',
@@ -43,6 +52,11 @@ export function sheetHead(file: ProductionFile, edition: SheetEdition, paper?: P
     draft: edition.version === null,
     printed: `printed ${fullDate(edition.printed.slice(0, 10))} ${clock(edition.printed)}`,
   };
+}
+
+/** What stands at the foot of every page, beside its number, and in the title of the document. */
+export function sheetFoot(head: SheetHead): string {
+  return `${head.code} · ${head.what.toLowerCase()} ${head.of} · ${head.edition}`;
 }
 
 /** `2027-03-08` → `Mon 8 March 2027`. */
