@@ -1,5 +1,6 @@
 import type { Pin, ProductionFile } from '../contracts/resources';
-import type { PassId } from '../domain/flavours';
+import { DEFAULT_RULES } from '../domain/defaults';
+import type { Minute, PassId, WallDate } from '../domain/flavours';
 import { clock, dayWords } from '../time/words';
 import { zoneClock } from '../time/wall';
 import type { DayItem, PlanDay } from './day';
@@ -35,6 +36,32 @@ export function moveOf(file: ProductionFile, days: readonly PlanDay[], pass: Pas
   const found = findPass(days, pass);
   if (!found) return { refused: 'It is not in the plan; take it in first.' };
   return direction === 'earlier' || direction === 'later' ? swapped(file, found, direction) : onOtherDay(file, found, direction);
+}
+
+/**
+ * What a pass dropped on a day at a minute is pinned to: that start, on the grid of `step`.
+ * Refused where its room is not open for its whole length.
+ */
+export function dropOf(file: ProductionFile, days: readonly PlanDay[], pass: PassId, drop: { date: WallDate; at: Minute }): Move | NoMove {
+  const found = findPass(days, pass);
+  if (!found) return { refused: 'It is not in the plan; take it in first.' };
+  const zone = zoneClock(file.production.timezone);
+  const { item } = found;
+  const at = onGrid(file, days, drop);
+  const room = file.rooms.find(({ id }) => id === item.room);
+  const inside = (room?.open ?? []).some(({ from, to }) => from <= zone.wallOf(at) && zone.wallOf(at + item.to - item.from) <= to);
+  const wall = zone.wallOf(at);
+  if (!inside)
+    return { refused: `${room?.name ?? 'Its room'} is not open for ${named(item)} at ${clock(wall)} on ${dayWords(drop.date)}.` };
+  return { pin: { at: wall }, says: `${named(item)} goes to ${clock(wall)} on ${dayWords(drop.date)}` };
+}
+
+/** The start on the grid of `step` that is nearest to a minute of a day. */
+export function onGrid(file: ProductionFile, days: readonly PlanDay[], { date, at }: { date: WallDate; at: Minute }): Minute {
+  const step = file.production.rules?.step ?? DEFAULT_RULES.step;
+  // Days are drawn from a full hour, so that the grid of the clock is the grid from there.
+  const from = days.find((day) => day.date === date)?.from ?? 0;
+  return from + Math.round((at - from) / step) * step;
 }
 
 function swapped(file: ProductionFile, { day, item }: { day: PlanDay; item: DayItem }, direction: 'earlier' | 'later'): Move | NoMove {

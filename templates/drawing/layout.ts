@@ -62,7 +62,7 @@ export interface DayDrawing {
   left: number;
   threadsLeft: number;
   threadsRight: number;
-  hours: { y: number; label: string }[];
+  hours: { at: Minute; y: number; label: string }[];
   lanes: Lane[];
   blocks: Block[];
   names: ThreadName[];
@@ -187,7 +187,7 @@ export function layoutDay(day: PlanDay, { mode, width }: DrawingOptions): DayDra
     left: CLOCK_COLUMN,
     threadsLeft,
     threadsRight,
-    hours: day.hours.map(({ at, label }) => ({ y: y(at), label })),
+    hours: day.hours.map(({ at, label }) => ({ at, y: y(at), label })),
     lanes,
     blocks,
     names: threads.map(({ person, stays }, index) => ({

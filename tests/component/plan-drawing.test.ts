@@ -37,7 +37,7 @@ describe('the drawing', () => {
 });
 
 describe('a day on the page', () => {
-  const column = () => mount(PlanDayColumn, { props: { day: monday, width: 480, selected: null, reachable: 's1-basics' } });
+  const column = () => mount(PlanDayColumn, { props: { day: monday, width: 480, selected: null, reachable: 's1-basics', landing: null } });
 
   it('lists its passes for the keyboard, one of them reachable by Tab, each read out in full', () => {
     const options = column().findAll('[role="option"]');
@@ -70,7 +70,7 @@ describe('a day on the page', () => {
 
   it('says an empty day is not needed', () => {
     const empty = planDays(sampleFile(), { items: [], calls: [] })[0]!;
-    const wrapper = mount(PlanDayColumn, { props: { day: empty, width: 150, selected: null, reachable: null } });
+    const wrapper = mount(PlanDayColumn, { props: { day: empty, width: 150, selected: null, reachable: null, landing: null } });
     expect(wrapper.text()).toContain('Not needed by this plan. Free: Room A 10:00–20:00.');
   });
 

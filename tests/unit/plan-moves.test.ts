@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { planDays } from '../../shared/planner/day';
-import { moveOf, pinInWords } from '../../shared/planner/moves';
+import { dropOf, moveOf, onGrid, pinInWords } from '../../shared/planner/moves';
 import { editsToSetPass, editsToWritePasses, passName } from '../../shared/domain/passes';
 import { fileOf, HEAD, rowsOf } from '../../shared/domain/changes';
 import { effectivePasses } from '../../shared/planner/derive';
@@ -41,6 +41,20 @@ describe('moving a pass by hand', () => {
     });
     expect(moveOf(file, days, 's1-basics', 'dayBefore')).toEqual({ refused: 'Room A is not open on any day before Mon 8 March.' });
     expect(moveOf(file, days, 's3-organ', 'dayBefore')).toEqual({ refused: 'Room B is not open on any day before Tue 9 March.' });
+  });
+
+  it('stands where it is dropped, on the grid, if its room is open for all of it', () => {
+    const tuesday = days[1]!;
+    const at = (clockMinutes: number) => tuesday.from + clockMinutes - 600;
+    expect(onGrid(file, days, { date: '2027-03-09', at: at(872.4) })).toBe(at(870));
+    expect(dropOf(file, days, 's1-basics', { date: '2027-03-09', at: at(872.4) })).toEqual({
+      pin: { at: '2027-03-09T14:30' },
+      says: 'S1 Weir Song goes to 14:30 on Tue 9 March',
+    });
+    // It lasts 75 minutes, and Room A closes at 20:00.
+    expect(dropOf(file, days, 's1-basics', { date: '2027-03-09', at: at(1130) })).toEqual({
+      refused: 'Room A is not open for S1 Weir Song at 18:50 on Tue 9 March.',
+    });
   });
 
   it('says a pin in words', () => {

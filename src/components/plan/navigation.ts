@@ -46,17 +46,20 @@ export function itemInWords(item: DayItem, day: PlanDay): string {
   return parts.filter((part) => part !== undefined).join(', ') + (item.pinned ? '; pinned' : '');
 }
 
-/** A thread read aloud: `Tob arrives 11:15, leaves 15:45, waits 30 min`. */
+/** What the clock on the wall shows at a minute of a drawn day. */
+export function clockAt(day: PlanDay, minute: number): string {
+  const hour = day.hours.filter(({ at }) => at <= minute).at(-1);
+  return hour ? `${hour.label.slice(0, 2)}:${String(Math.round(minute - hour.at)).padStart(2, '0')}` : '';
+}
+
+/** Threads read aloud: `Tob arrives 11:15, leaves 15:45, waits 30 min`. */
 export function threadsInWords(day: PlanDay): string[] {
-  const clockAt = (minute: number): string => {
-    const hour = day.hours.filter(({ at }) => at <= minute).at(-1);
-    return hour ? `${hour.label.slice(0, 2)}:${String(minute - hour.at).padStart(2, '0')}` : '';
-  };
   return day.threads.flatMap(({ short, stays }) =>
     stays.map(({ arrive, release, marks }) => {
       const busy = marks.reduce((sum, { from, to }) => sum + to - from, 0);
       const waits = release - arrive - busy;
-      return `${short} arrives ${clockAt(arrive)}, leaves ${clockAt(release)}${waits > 0 ? `, waits ${length(waits)}` : ''}`;
+      const stay = `${short} arrives ${clockAt(day, arrive)}, leaves ${clockAt(day, release)}`;
+      return waits > 0 ? `${stay}, waits ${length(waits)}` : stay;
     }),
   );
 }

@@ -4,9 +4,10 @@ import type { PassId } from '../../../shared/domain/flavours';
 import { editsToSetPass } from '../../../shared/domain/passes';
 import { namesOf } from '../../../shared/domain/sheets/names';
 import type { PlanDay } from '../../../shared/planner/day';
-import { type Direction, findPass, moveOf, pinInWords } from '../../../shared/planner/moves';
+import { type Direction, dropOf, findPass, type Move, moveOf, type NoMove, pinInWords } from '../../../shared/planner/moves';
 import { zoneClock } from '../../../shared/time/wall';
 import type { Edit } from '../../../shared/domain/edits';
+import type { Landing } from './usePassDrag';
 
 interface Desk {
   file: ComputedRef<ProductionFile>;
@@ -21,7 +22,7 @@ interface Desk {
 
 export interface LastAction {
   says: string;
-  /** The edits that take it back. */
+  /** The edits that take it back; none where nothing was done. */
   back: Edit[];
 }
 
@@ -32,6 +33,7 @@ export function usePlanActions({ file, days, mayChange, apply, replan, say }: De
   unpin: (pass: PassId) => void;
   toggleLeftOut: (pass: PassId) => void;
   move: (pass: PassId, direction: Direction) => void;
+  drop: (landing: Landing) => void;
   takeBack: () => void;
 } {
   const last = ref<LastAction | null>(null);
@@ -72,9 +74,22 @@ export function usePlanActions({ file, days, mayChange, apply, replan, say }: De
   }
 
   function move(id: PassId, direction: Direction): void {
-    const moved = moveOf(file.value, days.value, id, direction);
-    if ('refused' in moved) say(moved.refused);
+    settle(id, moveOf(file.value, days.value, id, direction));
+  }
+
+  function drop({ pass, date, at }: Landing): void {
+    settle(pass, dropOf(file.value, days.value, pass, { date, at }));
+  }
+
+  function settle(id: PassId, moved: Move | NoMove): void {
+    if ('refused' in moved) refuse(moved.refused);
     else setPin(id, moved.pin, `${moved.says}. Pinned there.`);
+  }
+
+  /** Said aloud and shown, in the place of what was done last. */
+  function refuse(says: string): void {
+    last.value = { says, back: [] };
+    say(says);
   }
 
   function takeBack(): void {
@@ -84,5 +99,5 @@ export function usePlanActions({ file, days, mayChange, apply, replan, say }: De
     replan();
   }
 
-  return { last, togglePin, unpin, toggleLeftOut, move, takeBack };
+  return { last, togglePin, unpin, toggleLeftOut, move, drop, takeBack };
 }
