@@ -22,7 +22,7 @@ export class Unreachable extends Error {
 }
 
 interface RequestOptions {
-  method?: 'GET' | 'POST' | 'PUT' | 'DELETE';
+  method?: 'GET' | 'POST' | 'PUT' | 'PATCH' | 'DELETE';
   /** Sent as JSON, or as it is where it is a form. */
   body?: unknown;
   signal?: AbortSignal;

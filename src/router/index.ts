@@ -9,6 +9,7 @@ export function createAppRouter(): Router {
     routes: [
       { path: '/', name: 'start', component: () => import('../views/StartView.vue') },
       { path: '/account', name: 'account', component: () => import('../views/AccountView.vue') },
+      { path: '/invitation/:token', name: 'invitation', component: () => import('../views/InvitationView.vue') },
       {
         path: '/p/:id',
         component: () => import('../views/ProductionView.vue'),
