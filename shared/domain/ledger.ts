@@ -5,7 +5,7 @@ import { partKey } from './changes';
 import { edit, type Edit } from './edits';
 import type { PartId, PersonId, SongId } from './flavours';
 import { freeId } from './ids';
-import { type ColumnKey, columnsOfSong, leaderOf, partInColumn } from './ledgerTable';
+import { type ColumnKey, columnKey, columnsOfSong, leaderOf, partInColumn } from './ledgerTable';
 import { dropParts, leave, peopleAfter } from './passUpkeep';
 
 /**
@@ -47,7 +47,7 @@ function withPart(file: ProductionFile, songId: SongId, part: Part): ProductionF
 export function changesForCell(file: ProductionFile, songId: SongId, partName: string, wanted: CellEdit, remembered?: Part): Edit[] {
   const song = songOf(file, songId);
   if (!song) return [];
-  const part = partInColumn(song, partName.trim().toLowerCase());
+  const part = partInColumn(song, columnKey(partName));
   if ('mode' in wanted) {
     if (wanted.mode === null) return part ? dropParts(file, new Map([[songId, new Set([part.id])]])) : [];
     if (!part) return addPart(file, song, partName.trim(), wanted.mode, remembered);
@@ -70,7 +70,7 @@ function usualPlayers(file: ProductionFile, column: ColumnKey): PersonId[] {
 }
 
 function addPart(file: ProductionFile, song: Song, name: string, mode: PartMode, remembered?: Part): Edit[] {
-  const players = usualPlayers(file, name.toLowerCase());
+  const players = usualPlayers(file, columnKey(name));
   const named = displayName(file, name);
   const taken = (song.parts ?? []).map((part) => part.id);
   const fresh: Part = { id: freeId(named, taken, 'part'), name: named, mode, ...(players.length > 0 ? { players } : {}) };
@@ -81,7 +81,7 @@ function addPart(file: ProductionFile, song: Song, name: string, mode: PartMode,
 
 /** The column's name as the other songs write it. */
 function displayName(file: ProductionFile, name: string): string {
-  const key = name.toLowerCase();
+  const key = columnKey(name);
   for (const song of file.songs) for (const column of columnsOfSong(song).values()) if (column.key === key) return column.name;
   return name;
 }

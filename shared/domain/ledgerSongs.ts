@@ -3,7 +3,7 @@ import { partKey } from './changes';
 import { edit, type Edit } from './edits';
 import type { SongId } from './flavours';
 import { freeId, nextCode } from './ids';
-import { type ColumnKey, columnsOfSong, partInColumn } from './ledgerTable';
+import { type ColumnKey, partInColumn } from './ledgerTable';
 import { dropParts, dropSong } from './passUpkeep';
 
 /** Edits of whole rows and columns of the arrangement ledger. */
@@ -48,7 +48,3 @@ export function changesForColumnRemoval(file: ProductionFile, column: ColumnKey)
   );
   return leaving.size > 0 ? dropParts(file, leaving) : [];
 }
-
-/** Whether a name would fall into a column there is. */
-export const isColumn = (file: ProductionFile, name: string): boolean =>
-  file.songs.some((song) => [...columnsOfSong(song).values()].some(({ key }) => key === name.trim().toLowerCase()));

@@ -68,13 +68,16 @@ export interface Ledger {
 
 const capital = (name: string): string => name.charAt(0).toUpperCase() + name.slice(1);
 
+/** The column that a name falls into. */
+export const columnKey = (name: string): ColumnKey => name.trim().toLowerCase();
+
 /** The column of each part of a song, in the song's order. */
 export function columnsOfSong(song: Song): Map<PartId, { key: ColumnKey; name: string }> {
   const seen = new Map<string, number>();
   return new Map(
     (song.parts ?? []).map((part) => {
       const name = capital(partName(part));
-      const plain = name.trim().toLowerCase();
+      const plain = columnKey(name);
       const count = (seen.get(plain) ?? 0) + 1;
       seen.set(plain, count);
       return [part.id, count === 1 ? { key: plain, name } : { key: `${plain} ${count}`, name: `${name} ${count}` }];
@@ -98,6 +101,21 @@ function unionOfColumns(songs: Song[]): { key: ColumnKey; name: string }[] {
       if (known >= 0) at = known + 1;
       else columns.splice(at++, 0, column);
     }
+  }
+  return columns;
+}
+
+/**
+ * Columns in the order in which they stood, each once; what is new stands after the column it follows in `next`. A column that is no
+ * longer in `next` keeps its place.
+ */
+export function columnsInOrder<Column extends { key: ColumnKey }>(before: readonly Column[], next: readonly Column[]): Column[] {
+  const columns = before.filter((column, index) => before.findIndex(({ key }) => key === column.key) === index);
+  let at = 0;
+  for (const column of next) {
+    const known = columns.findIndex(({ key }) => key === column.key);
+    if (known >= 0) at = known + 1;
+    else columns.splice(at++, 0, column);
   }
   return columns;
 }

@@ -65,6 +65,14 @@ export async function request<Schema extends z.ZodType>(
   return schema.parse(response.status === 204 ? undefined : await response.json());
 }
 
+/** Fetches a document, with the name that the server gives it. Throws like {@link request}. */
+export async function requestFile(path: string): Promise<{ name: string; content: Blob }> {
+  const response = await send(path, {});
+  if (!response.ok) throw await refusalOf(response);
+  const name = /filename="([^"]+)"/.exec(response.headers.get('content-disposition') ?? '')?.[1];
+  return { name: name ?? 'document', content: await response.blob() };
+}
+
 /** The sentence to show for whatever went wrong. */
 export function sentenceOf(error: unknown): string {
   if (error instanceof Refusal || error instanceof Unreachable) return error.message;

@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import type { ProductionFile } from '../../shared/contracts/resources';
 import { type CellEdit, changesForCell } from '../../shared/domain/ledger';
 import { changesForColumnName, changesForColumnRemoval, changesForNewSong, changesForSongRemoval } from '../../shared/domain/ledgerSongs';
-import { ledgerOf } from '../../shared/domain/ledgerTable';
+import { columnsInOrder, ledgerOf } from '../../shared/domain/ledgerTable';
 import { edited, smallBand, writtenBand } from '../factories/band';
 
 const cell = (file: ProductionFile, song: string, part: string, wanted: CellEdit) => edited(file, changesForCell(file, song, part, wanted));
@@ -39,6 +39,16 @@ describe('the ledger as a table', () => {
     expect(first?.cells.get('gong')?.alarm).toBe('nobody');
     expect(first?.cells.get('drums')?.alarm).toBeNull();
     expect(first?.alarm).toBe('rehearse first');
+  });
+
+  it('lets no column move or vanish while somebody types', () => {
+    const named = (...keys: string[]) => keys.map((key) => ({ key }));
+    const keys = (columns: { key: string }[]) => columns.map(({ key }) => key).join(' ');
+    expect(keys(columnsInOrder(named('drums', 'fiddle', 'lead'), named('drums', 'lead', 'fiddle')))).toBe('drums fiddle lead');
+    expect(keys(columnsInOrder(named('drums', 'lead'), named('drums', 'bass', 'lead')))).toBe('drums bass lead');
+    expect(keys(columnsInOrder(named('drums', 'fiddle', 'lead'), named('drums', 'lead')))).toBe('drums fiddle lead');
+    expect(keys(columnsInOrder(named('drums', 'drums'), []))).toBe('drums');
+    expect(keys(columnsInOrder([], named('a', 'b')))).toBe('a b');
   });
 
   it('keeps two parts of one name apart', () => {
