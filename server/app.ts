@@ -52,6 +52,8 @@ export function createApp(context: Context): Express {
       serializers: {
         req: ({ method, url }: { method: string; url: string }) => ({ method, url: withoutToken(url) }),
         res: ({ statusCode }: { statusCode: number }) => ({ statusCode }),
+        // An error of the database carries its statement, and with it what people typed.
+        err: ({ name, message, stack }: Error) => ({ name, message, stack }),
       },
     }),
   );

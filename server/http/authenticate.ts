@@ -14,11 +14,11 @@ const SESSION_DAYS = 30;
 
 const token = z.object({ sub: z.uuid(), sid: z.uuid() });
 
-/** Cookies are for https alone where the request came by it; on loopback there is only http. */
+/** Cookies are for https alone where the request came by it, also to a proxy before us; on loopback there is only http. */
 const cookieOptions = (request: Request): CookieOptions => ({
   httpOnly: true,
   sameSite: 'lax',
-  secure: request.secure,
+  secure: request.secure || request.headers['x-forwarded-proto'] === 'https',
   path: '/',
 });
 

@@ -7,7 +7,7 @@ import { readProductionFile } from '../../shared/file/read';
 import { writeProductionFile } from '../../shared/file/write';
 import { loadStartingPoints } from '../../server/resources/starting-points/service';
 import { productionOf, someone, type Agent } from '../factories/accounts';
-import { smallProduction } from '../factories/productions';
+import { smallPlan, smallProduction } from '../factories/productions';
 import { anyProduction } from '../factories/any-production';
 import { openApp, type OpenApp } from '../support/app';
 
@@ -189,6 +189,17 @@ describe('the list', () => {
 });
 
 describe('deleting a production', () => {
+  it('takes what was published with it', async () => {
+    const id = await productionOf(producer, smallProduction());
+    const plan = await producer
+      .post(`/api/productions/${id}/plans`)
+      .send({ inputRevision: 1, seed: 1, iterations: 1, outcome: smallPlan() })
+      .expect(201);
+    await producer.post(`/api/productions/${id}/versions`).send({ plan: plan.body.id }).expect(201);
+    await producer.delete(`/api/productions/${id}`).expect(204);
+    expect(await open.db.calls.count({ where: { productionId: id } })).toBe(0);
+  });
+
   it('takes everything of it and nothing of another', async () => {
     const gone = (await producer.post('/api/productions').send({ from: 'nine-sluices' }).expect(201)).body.id as string;
     const kept = (await producer.post('/api/productions').send({ from: 'quillgate' }).expect(201)).body.id as string;

@@ -42,7 +42,6 @@ export class Batch {
     if (known && !known.removed && !(resource === 'production' && this.isBlank))
       throw new Refusal('conflict', `There is already ${wordsFor(resource, key)}. Choose another id, or change the one that is there.`);
     if (!known && resource === 'production') throw new Refusal('wrong-fields', `The key of the production is "${HEAD}".`);
-    this.demandSong(resource, key);
     const fields = checkedFields(resource, key, { ...change.fields, position: null });
     const before = known && resource !== 'production' ? known.fields : null;
     const row: KnownRow = known ?? { id: randomUUID(), resource, key, revision: 0, position: 0, removed: false, fields };
@@ -94,7 +93,6 @@ export class Batch {
     const { resource, key } = change;
     const row = this.rows.get(resource, key);
     if (!row) throw this.unknown(change);
-    this.demandSong(resource, key);
     if (!row.removed) return { before: row.fields, after: row.fields };
     row.removed = false;
     this.touched.add(row);
@@ -111,16 +109,6 @@ export class Batch {
 
   private unknown({ resource, key }: Change): Refusal {
     return new Refusal('conflict', `There is no such thing as ${wordsFor(resource, key)}. Load the page again.`);
-  }
-
-  private demandSong(resource: ResourceName, key: string): void {
-    if (resource !== 'parts') return;
-    const song = this.rows.get('songs', songOfKey(key));
-    if (song && !song.removed) return;
-    const path = `parts.${key}`;
-    throw new Refusal('wrong-fields', `The song of the part ${idOfKey(resource, key)} is not there. Add or bring back the song first.`, [
-      { path, expected: 'a key of the form song/part, whose song is there' },
-    ]);
   }
 
   /** The rows of the list in which this one stands, in their order. */

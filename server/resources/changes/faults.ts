@@ -12,7 +12,7 @@ function danglingReferences(rows: Rows, touched: Iterable<KnownRow>): Fault[] {
   return [...touched].flatMap((row) =>
     row.removed
       ? []
-      : namedBy(row.resource, row.fields)
+      : namedBy(row.resource, row.key, row.fields)
           .filter(({ to, key }) => rows.get(to, key)?.removed !== false)
           .map(({ to, key, path }) => ({
             path: [row.resource, row.key, ...path].join('.'),

@@ -4,9 +4,8 @@ import { idOfKey } from '../../../shared/domain/changes';
 import type { Fault } from '../../../shared/contracts/api';
 import { Refusal } from '../../http/errors';
 import { faultsOf } from '../../http/validate';
+import { extraFaults } from './extra';
 import type { RowFields } from './mapping';
-
-const MOST_EXTRA = 100_000;
 
 /** What the key of a row says about its fields. */
 function identityOf(resource: ResourceName, key: string): RowFields {
@@ -24,13 +23,13 @@ function unknownFields(sent: unknown, read: unknown, path: string): Fault[] {
   return Object.entries(sent).flatMap(([name, value]): Fault[] => {
     if (value === undefined) return [];
     const at = `${path}.${name}`;
-    return name in read ? unknownFields(value, read[name], at) : [{ path: at, expected: 'a field that is known here' }];
+    return Object.hasOwn(read, name) ? unknownFields(value, read[name], at) : [{ path: at, expected: 'a field that is known here' }];
   });
 }
 
 const unknownNames = (resource: ResourceName, fields: RowFields, path: string): Fault[] =>
   Object.keys(fields)
-    .filter((name) => !(name in rowSchemas[resource].shape))
+    .filter((name) => !Object.hasOwn(rowSchemas[resource].shape, name))
     .map((name) => ({ path: `${path}.${name}`, expected: 'a field that is known here' }));
 
 /**
@@ -48,7 +47,7 @@ export function checkedFields(resource: ResourceName, key: string, fields: RowFi
     ...strange.map(([name, value]) => ({ path: `${path}.${name}`, expected: `${String(value)}, as its key says; an id is not changed` })),
     ...(parsed.success ? unknownFields(whole, parsed.data, path) : faultsOf(parsed.error, path)),
     ...(parsed.success ? [] : unknownNames(resource, whole, path)),
-    ...(JSON.stringify(given.extra ?? null).length > MOST_EXTRA ? [{ path: `${path}.extra`, expected: 'fewer unknown fields' }] : []),
+    ...(parsed.success && parsed.data.extra ? extraFaults(resource, parsed.data.extra, `${path}.extra`) : []),
   ];
   if (faults.length > 0 || !parsed.success) throw wrongFields(faults);
   return parsed.data;

@@ -1,6 +1,6 @@
 import { rowSchemas } from '../../../shared/contracts/rows';
 import type { ResourceName } from '../../../shared/contracts/resources';
-import { idOfKey } from '../../../shared/domain/changes';
+import { idOfKey, songOfKey } from '../../../shared/domain/changes';
 import { attributeOf, MINUTES, type ChildrenField, type Field, type ReferenceField, type ValueField } from '../../models/fields';
 import type { Held } from '../../models/rows';
 import { resourceFields } from '../../models/tables';
@@ -111,8 +111,13 @@ const entriesOf = (list: ChildrenField, value: unknown): { at: string | number; 
   return items.map((item, at) => ({ at, entry: list.form === 'keys' ? { key: item } : isRecord(item) ? item : {} }));
 };
 
-/** Every row that these fields name. */
-export function namedBy(resource: ResourceName, fields: RowFields): Named[] {
+/** Every row that a row names; a part names its song by its key. */
+export function namedBy(resource: ResourceName, key: string, fields: RowFields): Named[] {
+  const inFields = namedInFields(resource, fields);
+  return resource === 'parts' ? [{ to: 'songs', key: songOfKey(key), path: ['song'] }, ...inFields] : inFields;
+}
+
+function namedInFields(resource: ResourceName, fields: RowFields): Named[] {
   return Object.entries(resourceFields[resource]).flatMap(([name, field]): Named[] => {
     const value = fields[name];
     if (value === undefined) return [];

@@ -14,15 +14,21 @@ import type { VersionModel } from '../../models/plans';
 import { presentRows } from '../changes/rows';
 import { applyWithin, readProduction } from '../changes/service';
 
+/** Songs, parts, passes, people and so on together: some twenty times a long production. */
+const MOST_ROWS = 30_000;
+
 /** A production with all of a file's rows; who makes it is its producer. */
 export async function createProduction(context: Context, actor: Actor, file: ProductionFile): Promise<{ id: string }> {
   const { db } = context;
   const { code, title, timezone } = file.production;
+  const changes = changesOf(file, randomUUID);
+  if (changes.length > MOST_ROWS)
+    throw new Refusal('too-large', `This production has more than ${MOST_ROWS} rows. Split it into several productions.`);
   return db.sequelize.transaction(async (transaction) => {
     const production = await db.productions.create({ createdBy: actor.userId, code, title, timezone }, { transaction });
     await db.members.create({ productionId: production.id, userId: actor.userId, role: 'producer', personId: null }, { transaction });
     const writer = { role: 'producer', person: null, productionId: production.id, userId: actor.userId, name: actor.name } as const;
-    await applyWithin(context, writer, changesOf(file, randomUUID), transaction);
+    await applyWithin(context, writer, changes, transaction);
     return { id: production.id };
   });
 }
