@@ -1,6 +1,6 @@
 import type { MadePlan } from '../contracts/plan';
 import type { ProductionFile } from '../contracts/resources';
-import type { Minutes, PassId, WallDate } from '../domain/flavours';
+import type { Minute, Minutes, PassId, WallDate } from '../domain/flavours';
 import { passInWords } from '../domain/passes';
 import { namesOf } from '../domain/sheets/names';
 import { clock, dayWords, length } from '../time/words';
@@ -33,6 +33,7 @@ export interface PlanSummary {
 /** With less than this between somebody's release and the end of their window, a small slip loses them. Common practice, no source. */
 const THIN: Minutes = 30;
 const WEEKDAY = 3;
+const DAY: Minutes = 1440;
 
 export function planSummary(file: ProductionFile, plan: MadePlan): PlanSummary {
   const zone = zoneClock(file.production.timezone);
@@ -108,13 +109,20 @@ function overrunWarning(file: ProductionFile, plan: MadePlan, zone: ZoneClock): 
     const room = file.rooms.find(({ id }) => id === day.room);
     const open = room?.open.filter(({ from }) => from.slice(0, 10) === day.date) ?? [];
     if (!room || open.length === 0) return [];
-    const closes = open.reduce((last, { to }) => (to > last ? to : last), open[0]!.to);
-    const over = minutesBetween(closes, day.p90, zone);
-    return over > 0 ? [{ day, room, closes, over }] : [];
+    const opens = Math.min(...open.map(({ from }) => minuteOf(from, zone)));
+    const closes = Math.max(...open.map(({ to }) => minuteOf(to, zone)));
+    const over = endOf(day.date, day.p90, opens, zone) - closes;
+    return over > 0 ? [{ day, room, closes: clock(zone.wallOf(closes)), over }] : [];
   });
   const [first] = late.sort((a, b) => b.over - a.over);
   if (!first) return [];
   const day = dayWords(first.day.date).slice(0, WEEKDAY);
-  const says = `${day}: 1 in 10 past ${clock(first.day.p90)}, ${first.room.name ?? first.room.id} closes ${clock(first.closes)}`;
+  const says = `${day}: 1 in 10 past ${first.day.p90}, ${first.room.name ?? first.room.id} closes ${first.closes}`;
   return [{ word: 'may run over', says }];
+}
+
+/** The minute at which a room-day ends by the clock; a time before it opens is one after midnight. */
+function endOf(date: WallDate, ends: string, opens: Minute, zone: ZoneClock): Minute {
+  const minute = minuteOf(`${date}T${ends}`, zone);
+  return minute < opens ? minute + DAY : minute;
 }

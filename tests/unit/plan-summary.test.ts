@@ -43,12 +43,21 @@ describe('a plan in a few figures', () => {
   it('looks at the day that one time in ten runs past its hours', () => {
     const plan = samplePlan();
     plan.odds.days = [
-      { room: 'a', date: '2027-03-08', p50: '2027-03-08T17:05', p90: '2027-03-08T19:20' },
-      { room: 'a', date: '2027-03-09', p50: '2027-03-09T19:00', p90: '2027-03-09T20:40' },
+      { room: 'a', date: '2027-03-08', p50: '17:05', p90: '19:20' },
+      { room: 'a', date: '2027-03-09', p50: '19:00', p90: '20:40' },
     ];
     expect(planSummary(sampleFile(), plan).warnings).toContainEqual({
       word: 'may run over',
       says: 'Tue: 1 in 10 past 20:40, Room A closes 20:00',
+    });
+  });
+
+  it('takes an end before the room opens for one after midnight', () => {
+    const plan = samplePlan();
+    plan.odds.days = [{ room: 'a', date: '2027-03-09', p50: '19:00', p90: '00:20' }];
+    expect(planSummary(sampleFile(), plan).warnings).toContainEqual({
+      word: 'may run over',
+      says: 'Tue: 1 in 10 past 00:20, Room A closes 20:00',
     });
   });
 });
