@@ -1,7 +1,8 @@
 import type { Dependency, Pass, ProductionFile } from '../../../shared/contracts/resources';
 import type { PassId } from '../../../shared/domain/flavours';
 import { passInWords } from '../../../shared/domain/passes';
-import { namesOf, partsInWords, partsOf } from '../../../shared/domain/sheets/names';
+import { namesOf, partsOf } from '../../../shared/domain/sheets/names';
+import { partsInWords } from '../../../shared/domain/sheets/pass-words';
 import { estimateOf } from '../../../shared/planner/derive';
 import { pinInWords } from '../../../shared/planner/moves';
 import { length } from '../../../shared/time/words';
