@@ -10,6 +10,7 @@ import { type PlanDay, planDays } from '../../../shared/planner/day';
 import { effectivePasses } from '../../../shared/planner/derive';
 import { hasPrices, planMoney } from '../../../shared/planner/money';
 import { findPass } from '../../../shared/planner/moves';
+import { whyHere } from '../../../shared/planner/reasons';
 import { planSummary, type PlanSummary } from '../../../shared/planner/summary';
 import { usePlan } from '../../stores/plan';
 import { useProduction } from '../../stores/production';
@@ -85,7 +86,7 @@ export function usePlanPage(): {
       ...passName(file.value, known),
       place: found ? [`${found.day.title}, ${found.item.starts}–${found.item.ends}`, room].filter(Boolean).join(', ') : null,
       facts: passFacts(file.value, pass),
-      reasons: [],
+      reasons: plan.drawn ? whyHere(file.value, plan.drawn, pass) : [],
       pinned: known.pin !== undefined,
       leftOut: known.leftOut ?? false,
     };
