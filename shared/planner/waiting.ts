@@ -51,17 +51,20 @@ function gapsOf(file: ProductionFile, zone: ZoneClock, items: readonly TimedItem
   return staysOf(person, around, times, file).flatMap(({ arrive, marks }) => {
     const works = marks.filter(({ as }) => as !== 'rest');
     let at = arrive;
-    return works.flatMap((work, position): Gap[] => {
-      const gap = { from: at, to: work.from };
-      at = Math.max(at, work.to);
+    return works.flatMap((own, position): Gap[] => {
+      const gap = { from: at, to: own.from };
+      at = Math.max(at, own.to);
       const rooms = new Set(works.slice(0, position + 1).map(({ room }) => room));
       const meanwhile = around.filter((item) => rooms.has(item.room ?? null) && item.from < gap.to && item.to > gap.from);
-      const minutes = gap.to - gap.from - restIn(file, meanwhile, gap);
+      const rest = restIn(file, meanwhile, gap);
+      const minutes = gap.to - gap.from - rest;
       if (minutes <= 0) return [];
-      const next = around.find((item) => item.from === work.from && item.people.includes(person.id));
+      const next = around.find((item) => item.from === own.from && item.people.includes(person.id));
       const wall = { from: zone.wallOf(gap.from), to: zone.wallOf(gap.to) };
-      const goesOn = meanwhile.length > 0 ? `; meanwhile ${meanwhile.slice(0, MOST_NAMES).map(names).join(', ')}` : '';
-      const says = `${clockOf(wall.from)}–${clockOf(wall.to)}, ${length(minutes)} until ${next ? names(next) : 'the rig'}${goesOn}`;
+      const work = meanwhile.filter(({ kind }) => kind !== 'meal' && kind !== 'break');
+      const goesOn = work.length > 0 ? `; meanwhile ${work.slice(0, MOST_NAMES).map(names).join(', ')}` : '';
+      const wait = `${length(minutes)}${rest > 0 ? ' besides the pauses' : ''}`;
+      const says = `${clockOf(wall.from)}–${clockOf(wall.to)}, ${wait} until ${next ? names(next) : 'the rig'}${goesOn}`;
       return [{ ...wall, minutes, says }];
     });
   });

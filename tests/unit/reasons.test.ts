@@ -58,10 +58,10 @@ describe('who waits', () => {
         waiting: 75,
         gaps: [
           {
-            from: '2027-03-09T13:15',
+            from: '2027-03-09T12:30',
             to: '2027-03-09T14:30',
             minutes: 75,
-            says: '13:15–14:30, 1 h 15 until s1 s1; meanwhile s2 s2, s1 s1, the reserve',
+            says: '12:30–14:30, 1 h 15 besides the pauses until s1 s1; meanwhile the rig of booth, s2 s2, s1 s1',
           },
         ],
       },
