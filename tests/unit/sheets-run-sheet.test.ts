@@ -55,7 +55,16 @@ describe('the run sheet of a day', () => {
       note: 'two takes, then listen',
     });
     expect(rows[7]).toMatchObject({ title: 'Reserve', minutes: 45 });
-    expect(rows[1]).toMatchObject({ task: 'Full kit', people: ['Tob', 'Dov'], note: 'two to lift, walkways clear, mute before patching' });
+    expect(rows[1]).toMatchObject({
+      task: 'Full kit',
+      people: ['Tob 11:45', 'Dov 12:30'],
+      note: 'two to lift, walkways clear, mute before patching',
+    });
+  });
+
+  it('tells those who get ready in a rig with their times in its own row, and not twice', () => {
+    const marks = linesOf(sheetOf(SHEET_DAYS.first)).flatMap((line) => (line.is === 'people' ? line.arrive : []));
+    expect(marks).toEqual(['Mara', 'Jo']);
   });
 
   it('says out of which set-up a change is made, also over night', () => {

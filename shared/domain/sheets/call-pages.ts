@@ -5,7 +5,7 @@ import type { CallDay, CallFact, CallLine, CallPage, Paper } from './sheet';
 const HEADER = 37;
 const DAY_HEAD = 35;
 const LINE = 5.3;
-const COLUMNS = { what: 80, key: 31, tempo: 30 };
+const COLUMNS = { what: 74, key: 27, tempo: 39 };
 /** The most lines of one day on a page. */
 const MOST_LINES = 12;
 

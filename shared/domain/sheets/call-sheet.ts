@@ -6,7 +6,8 @@ import type { PersonId, WallDate } from '../flavours';
 import { callFacts } from './call-facts';
 import { callPages } from './call-pages';
 import { isOwn } from './marks';
-import { type Names, namesOf, partName, partsOf, songWords } from './names';
+import { type Names, namesOf } from './names';
+import { ownParts, passWords } from './pass-words';
 import { releaseRange } from './release';
 import { dayCount, type RoomDay, usedDates, usedRoomDays } from './room-days';
 import { type CallDay, type CallLine, type CallSheet, fullDate, type Paper, type SheetEdition, sheetHead } from './sheet';
@@ -123,16 +124,17 @@ function lineOf(item: PlanItem, person: PersonId, file: ProductionFile, names: N
   if (item.kind === 'break') return plain('pause', item.start, item.end, 'Break');
   if (item.kind === 'listen') return plain('other', item.start, item.end, 'Listen');
   if (item.kind === 'event') return plain('other', item.start, item.end, names.event(item.id));
-  const pass = names.pass(item.id);
-  const song = names.song(pass?.song);
-  const own = pass ? partsOf(pass, song).filter((part) => part.players?.includes(person)) : [];
-  const needs = [...new Set(own.flatMap((part) => part.needs ?? []))];
+  const song = names.song(names.pass(item.id)?.song);
+  const { code, title, own, parts } = passWords(file, item, names);
+  const mine = parts.filter((part) => part.players?.includes(person));
+  const needs = [...new Set(mine.flatMap((part) => part.needs ?? []))];
   return {
     kind: 'pass',
     from: clock(item.start),
     to: clock(item.end),
-    ...(song ? songWords(song) : { code: '', title: pass?.name ?? item.id ?? '' }),
-    part: own.map((part) => [partName(part), part.mode].filter(Boolean).join(', ')).join(' · ') || (song ? (pass?.name ?? '') : ''),
+    code,
+    title,
+    part: ownParts(mine) || own,
     key: song ? keyWords(song, file) : '',
     tempo: song ? tempoWords(song) : '',
     note: [room, needs.length > 0 ? `needs ${needs.join(', ')}` : ''].filter((text) => text !== '').join(' · '),

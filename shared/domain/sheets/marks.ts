@@ -1,5 +1,6 @@
 import type { MadePlan, PlanCall, PlanItem } from '../../contracts/plan';
 import type { ProductionFile } from '../../contracts/resources';
+import { zoneClock } from '../../time/wall';
 import { clock, dateOfWall } from '../../time/words';
 import type { PersonId, WallTime } from '../flavours';
 import type { Names } from './names';
@@ -49,6 +50,15 @@ export function isOwn(item: PlanItem, person: PersonId, operators: readonly Pers
 
 const ownItems = (day: RoomDay, person: PersonId) => day.items.filter((item) => isOwn(item, person, day.room.operators));
 
+/** The calls of those who arrive while a set-up is built, to get ready for it; the rig's own row names them with their times. */
+export function readyArrivals(item: PlanItem, day: RoomDay, plan: MadePlan, names: Names): PlanCall[] {
+  if (item.kind !== 'rig') return [];
+  const ready = new Set(names.readyFor(item.setup));
+  return plan.calls
+    .filter((call) => call.date === day.date && ready.has(call.person) && item.start <= call.arrive && call.arrive < item.end)
+    .sort((a, b) => (a.arrive < b.arrive ? -1 : a.arrive > b.arrive ? 1 : 0));
+}
+
 /** Short names by time. */
 function byTime(calls: readonly PlanCall[], timeOf: (call: PlanCall) => WallTime | null, names: Names): Map<WallTime, string[]> {
   const at = new Map<WallTime, string[]>();
@@ -59,14 +69,22 @@ function byTime(calls: readonly PlanCall[], timeOf: (call: PlanCall) => WallTime
   return at;
 }
 
+/** A stop is worth a line where so many minutes or fewer lie between a planned release and it (common practice, no source). */
+const NEAR = 120;
+
 /** What must be over by a time of this day: people who go, loud hours that end, hired things that leave, collections. */
 function hardStops(day: RoomDay, calls: readonly PlanCall[], file: ProductionFile, names: Names): TimedMark[] {
+  const zone = zoneClock(file.production.timezone);
+  const length = (from: WallTime, to: WallTime) => {
+    const [start, end] = [zone.minuteOf(from), zone.minuteOf(to)];
+    return start === 'gap' || end === 'gap' ? 0 : end - start;
+  };
   const within = (time: WallTime) => day.open.from < time && time < day.open.to;
   const windowEnds = byTime(
     calls,
     (call) => {
       const end = windowEnd(names.person(call.person)?.windows, { from: call.arrive, to: call.release });
-      return end !== null && within(end) ? end : null;
+      return end !== null && within(end) && length(call.release, end) <= NEAR ? end : null;
     },
     names,
   );
@@ -95,7 +113,8 @@ export function marksOf(day: RoomDay, sameDate: readonly RoomDay[], file: Produc
   const calls = plan.calls.filter((call) => call.date === day.date && ownItems(day, call.person).length > 0);
   const first = (call: PlanCall, where: RoomDay) => ownItems(where, call.person)[0]?.start ?? '9999';
   const last = (call: PlanCall, where: RoomDay) => ownItems(where, call.person).at(-1)?.end ?? '';
-  const arriving = calls.filter((call) => sameDate.every((other) => first(call, day) <= first(call, other)));
+  const named = new Set(day.items.flatMap((item) => readyArrivals(item, day, plan, names)));
+  const arriving = calls.filter((call) => !named.has(call) && sameDate.every((other) => first(call, day) <= first(call, other)));
   const leaving = calls.filter((call) => sameDate.every((other) => last(call, day) >= last(call, other)));
   const arrivals = byTime(arriving, (call) => call.arrive, names);
   const releases = byTime(leaving, (call) => call.release, names);

@@ -1,5 +1,4 @@
 import type { Part, Pass, Person, ProductionFile, Song } from '../../contracts/resources';
-import type { PartMode } from '../../contracts/values';
 import { type EffectivePass, effectivePasses } from '../../planner/derive';
 import type { EventId, PassId, PersonId, SetupId, SongId } from '../flavours';
 
@@ -49,16 +48,4 @@ export function partName(part: Part): string {
 export function partsOf(pass: Pass, song: Song | undefined): Part[] {
   const wanted = new Set(pass.parts ?? []);
   return (song?.parts ?? []).filter((part) => wanted.has(part.id));
-}
-
-const MODE_ORDER: PartMode[] = ['live', 'guide', 'overdub', 'double', 'stack', 'repair'];
-
-/** `live: drums, bass · guide: lead vocal`. Parts without a mode stand last, without a label. */
-export function partsInWords(parts: readonly Part[]): string {
-  const groups = MODE_ORDER.flatMap((mode) => {
-    const names = parts.filter((part) => part.mode === mode).map(partName);
-    return names.length > 0 ? [`${mode}: ${names.join(', ')}`] : [];
-  });
-  const others = parts.filter((part) => part.mode === undefined).map(partName);
-  return [...groups, ...(others.length > 0 ? [others.join(', ')] : [])].join(' · ');
 }

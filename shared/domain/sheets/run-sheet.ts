@@ -5,9 +5,10 @@ import type { ZoneClock } from '../../time/wall';
 import { zoneClock } from '../../time/wall';
 import { clock } from '../../time/words';
 import { DEFAULT_RULES } from '../defaults';
-import type { Minutes, PersonId, RoomId, WallDate, WallTime } from '../flavours';
-import { marksOf, type TimedMark } from './marks';
-import { type Names, namesOf, partsInWords, partsOf, songWords } from './names';
+import type { Minutes, RoomId, WallDate, WallTime } from '../flavours';
+import { marksOf, readyArrivals, type TimedMark } from './marks';
+import { type Names, namesOf } from './names';
+import { partsInWords, passWords, type PassWords } from './pass-words';
 import { runPages } from './run-pages';
 import { dayCount, type RoomDay, usedDates, usedRoomDays } from './room-days';
 import {
@@ -50,13 +51,13 @@ export function runSheet(file: ProductionFile, plan: MadePlan, request: RunSheet
     day: head.of,
     count: dayCount(request.date, usedDates(file, plan.items)),
     rooms: wanted.map((day): RunRoom => {
-      const rows = day.items.map((item) => ({ item, row: rowOf(item, day, all, names, zone) }));
+      const rows = day.items.map((item) => ({ item, row: rowOf(item, { day, all, file, plan, names, zone }) }));
       const lines = weave(rows, marksOf(day, sameDate, file, plan, names));
       return {
         room: day.room.name ?? day.room.id,
         facts: roomFacts(day, names),
         ends: endsOf(day, plan, file, zone),
-        pages: runPages(lines, meanwhileOf(day, sameDate, names), head.paper),
+        pages: runPages(lines, meanwhileOf(day, sameDate, file, names), head.paper),
       };
     }),
     threads: cropped(threads),
@@ -92,7 +93,17 @@ const PLAIN_TITLES: Record<Exclude<ItemKind, 'pass' | 'event'>, string> = {
   wrap: 'Wrap',
 };
 
-function rowOf(item: PlanItem, day: RoomDay, all: readonly RoomDay[], names: Names, zone: ZoneClock): RunRow {
+/** What a row is made from. */
+interface Reading {
+  day: RoomDay;
+  all: readonly RoomDay[];
+  file: ProductionFile;
+  plan: MadePlan;
+  names: Names;
+  zone: ZoneClock;
+}
+
+function rowOf(item: PlanItem, { day, all, file, plan, names, zone }: Reading): RunRow {
   const operators = new Set(day.room.operators ?? []);
   const row: RunRow = {
     is: 'row',
@@ -103,34 +114,41 @@ function rowOf(item: PlanItem, day: RoomDay, all: readonly RoomDay[], names: Nam
     code: '',
     title: '',
     task: '',
-    people: whoIn(item, names)
-      .filter((person) => !operators.has(person))
-      .map((person) => names.short(person)),
+    people: item.people.filter((person) => !operators.has(person)).map((person) => names.short(person)),
     setup: names.setup(item.setup),
     note: '',
   };
-  if (item.kind === 'pass') return { ...row, ...passWords(item, names) };
+  if (item.kind === 'pass') {
+    const pass = names.pass(item.id);
+    const words = passWords(file, item, names);
+    return {
+      ...row,
+      code: words.code,
+      title: words.title,
+      task: taskOf(words),
+      setup: names.setup(item.setup ?? pass?.setup),
+      note: pass?.note ?? '',
+    };
+  }
   if (item.kind === 'event') return { ...row, title: names.event(item.id) };
-  return { ...row, title: PLAIN_TITLES[item.kind], setup: '', task: plainTask(item, day, all, names), note: cautionFor(item) };
-}
-
-/** A rig is played by nobody, but those who get ready in it are there. */
-function whoIn(item: PlanItem, names: Names): PersonId[] {
-  return item.kind === 'rig' && item.people.length === 0 ? names.readyFor(item.setup) : item.people;
-}
-
-function passWords(item: PlanItem, names: Names): Pick<RunRow, 'code' | 'title' | 'task' | 'setup' | 'note'> {
-  const pass = names.pass(item.id);
-  const song = names.song(pass?.song);
-  const words = song ? songWords(song) : { code: '', title: pass?.name ?? item.id ?? '' };
-  const parts = pass ? partsInWords(partsOf(pass, song)) : '';
-  const own = song ? (pass?.name ?? '') : '';
   return {
-    ...words,
-    task: [own, parts].filter((text) => text !== '').join(' · '),
-    setup: names.setup(item.setup ?? pass?.setup),
-    note: pass?.note ?? '',
+    ...row,
+    title: PLAIN_TITLES[item.kind],
+    setup: '',
+    task: plainTask(item, day, all, names),
+    note: cautionFor(item),
+    people: item.kind === 'rig' ? gettingReady(item, day, plan, names) : row.people,
   };
+}
+
+/** Who gets ready while a set-up is built, in the order in which they come. */
+function gettingReady(item: PlanItem, day: RoomDay, plan: MadePlan, names: Names): string[] {
+  return readyArrivals(item, day, plan, names).map((call) => `${names.short(call.person)} ${clock(call.arrive)}`);
+}
+
+function taskOf({ own, parts }: PassWords): string {
+  const words = partsInWords(parts);
+  return [words.includes(own) ? '' : own, words].filter((text) => text !== '').join(' · ');
 }
 
 /** What is done in an item that is no pass: which set-up is built, out of which. */
@@ -179,15 +197,16 @@ function endsOf(day: RoomDay, plan: MadePlan, file: ProductionFile, zone: ZoneCl
   return { half: onGrid(odds.p50), nineInTen: onGrid(odds.p90) };
 }
 
-function meanwhileOf(day: RoomDay, sameDate: readonly RoomDay[], names: Names): Meanwhile[] {
+function meanwhileOf(day: RoomDay, sameDate: readonly RoomDay[], file: ProductionFile, names: Names): Meanwhile[] {
   const elsewhere = sameDate.filter((other) => other.room.id !== day.room.id);
   return elsewhere.flatMap((other) =>
     other.items
       .filter((item) => item.kind === 'pass' && item.start < day.open.to && item.end > day.open.from)
       .map((item) => {
-        const { code, title, task } = passWords(item, names);
+        const words = passWords(file, item, names);
+        const task = taskOf(words);
         const people = item.people.filter((person) => !(other.room.operators ?? []).includes(person)).map((person) => names.short(person));
-        const what = [code, task === '' ? title : task].filter((text) => text !== '').join(' ');
+        const what = [words.code, task === '' ? words.title : task].filter((text) => text !== '').join(' ');
         return {
           room: other.room.name ?? other.room.id,
           from: clock(item.start),
