@@ -31,6 +31,8 @@ const INSET = 10;
 const PIN_ROOM = 16;
 /** Space between the code and the title. */
 const CODE_GAP = 8;
+/** Space between the words and the times behind them. */
+const TIMES_GAP = 12;
 const LEADING = 1.22;
 /** How much of a line's size stands above and below the base line. */
 const ABOVE = 0.78;
@@ -72,10 +74,22 @@ export function labelOf(
   words.slice(1).forEach((text, index) => {
     lines.push({ y: baseline(index + 1, titleAt), size: titleAt, runs: [{ x, text, bold: false, soft }] });
   });
+  const beside = withTimes || !plain ? null : timesBeside(lines, item, x + room);
+  if (beside) lines[0]!.runs.push(beside);
   if (withTimes && times !== '') {
     lines.push({ y: baseline(Math.max(1, words.length), type.line), size: type.line, runs: [{ x, text: times, bold: false, soft: true }] });
   }
   return { lines, pin: item.pinned ? pinAt(block) : null };
+}
+
+/** Where there is room for one line only, the times stand behind its words. */
+function timesBeside(lines: LabelLine[], item: DayItem, right: number): LabelRun | null {
+  const [line] = lines;
+  const last = line?.runs.at(-1);
+  if (!line || !last || lines.length > 1) return null;
+  const text = `${item.starts}–${item.ends}`;
+  const x = last.x + textWidth(last.text, line.size, last.bold) + TIMES_GAP;
+  return x + textWidth(text, line.size) <= right ? { x, text, bold: false, soft: true } : null;
 }
 
 /** The times of an item, with the word for its pin where there is room for it (the mark stands in any case). */
