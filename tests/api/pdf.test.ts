@@ -65,7 +65,7 @@ describe('a printed run sheet', () => {
     const pages = textOfPdf(pdf).split('\f').slice(0, -1);
     expect(pages).toHaveLength(pagesOf(sheet));
     for (const [index, page] of pages.entries()) {
-      for (const words of ['SLUICE', 'Nine Sluices', 'Tue 9 March 2027', 'day 2 of 3', 'version 3', 'printed Tue 1 December 2026 14:30'])
+      for (const words of ['SLUICE', 'Nine Sluices', 'Tue 9 March 2027', 'day 2 of 3', 'Version 3', 'printed Tue 1 December 2026 14:30'])
         expect(page).toContain(words);
       expect(page).toContain(`Page ${index + 1} of ${pages.length}`);
     }
@@ -97,7 +97,7 @@ describe('a printed run sheet', () => {
     const pdf = await press.runSheet(theRunSheet(SHEET_DAYS.first));
     const info = ask('pdfinfo', pdf);
     expect(fact(info, 'Tagged')).toBe('yes');
-    expect(fact(info, 'Title')).toBe('Nine Sluices: run sheet Mon 8 March 2027, version 3');
+    expect(fact(info, 'Title')).toBe('Nine Sluices: run sheet Mon 8 March 2027, Version 3');
     expect(Buffer.from(pdf).toString('latin1')).toMatch(/\/Lang \(en\)/);
     const fonts = ask('pdffonts', pdf).split('\n').slice(2).filter(Boolean);
     expect(fonts.some((line) => line.includes('AtkinsonHyperlegible-Bold'))).toBe(true);
@@ -109,7 +109,7 @@ describe('a printed run sheet', () => {
     const sheet = runSheet(sheetFile(), sheetPlan(), { date: SHEET_DAYS.first, edition: { ...edition, version: null } })!;
     const text = textOfPdf(await press.runSheet(sheet));
     expect(text).toContain('DRAFT');
-    expect(text).not.toContain('version');
+    expect(text).not.toContain('Version');
   });
 
   it('shows markup as text', async () => {
@@ -263,7 +263,7 @@ describe('sheets over the API', () => {
     expect(answer.headers['content-disposition']).toBe('attachment; filename="BRIDGE_V1_2027-03-08_RUN-SHEET.pdf"');
     expect(fact(ask('pdfinfo', answer.body as Buffer), 'Page size')).toContain('letter');
     const text = textOfPdf(answer.body as Buffer);
-    for (const words of ['version 1', 'Stone Ferry', '10:00', '11:00', '12:00', 'Teo', 'Una']) expect(text).toContain(words);
+    for (const words of ['Version 1', 'Stone Ferry', '10:00', '11:00', '12:00', 'Teo', 'Una']) expect(text).toContain(words);
     for (const money of ['400', '90', '120', 'EUR']) expect(text).not.toContain(money);
   });
 

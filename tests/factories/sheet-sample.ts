@@ -241,8 +241,8 @@ export function sheetPlan(): MadePlan {
     odds: {
       musts: 0.8,
       days: [
-        { room: 'a', date: first, p50: `${first}T18:41`, p90: `${first}T19:38` },
-        { room: 'a', date: full, p50: `${full}T19:05`, p90: `${full}T20:10` },
+        { room: 'a', date: first, p50: '18:41', p90: '19:38' },
+        { room: 'a', date: full, p50: '19:05', p90: '20:10' },
       ],
     },
     conflicts: [],

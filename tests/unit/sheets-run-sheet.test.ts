@@ -21,7 +21,7 @@ describe('the run sheet of a day', () => {
       code: 'SLUICE',
       title: 'Nine Sluices',
       paper: 'A4',
-      edition: 'version 3',
+      edition: 'Version 3',
       draft: false,
       printed: 'printed Tue 1 December 2026 14:30',
     });

@@ -5,7 +5,7 @@ import type { ZoneClock } from '../../time/wall';
 import { zoneClock } from '../../time/wall';
 import { clock } from '../../time/words';
 import { DEFAULT_RULES } from '../defaults';
-import type { Minutes, RoomId, WallDate, WallTime } from '../flavours';
+import type { Minutes, RoomId, WallDate } from '../flavours';
 import { marksOf, readyArrivals, type TimedMark } from './marks';
 import { type Names, namesOf } from './names';
 import { partsInWords, passWords, type PassWords } from './pass-words';
@@ -56,7 +56,7 @@ export function runSheet(file: ProductionFile, plan: MadePlan, request: RunSheet
       return {
         room: day.room.name ?? day.room.id,
         facts: roomFacts(day, names),
-        ends: endsOf(day, plan, file, zone),
+        ends: endsOf(day, plan, file),
         pages: runPages(lines, meanwhileOf(day, sameDate, file, names), head.paper),
       };
     }),
@@ -184,15 +184,15 @@ function roomFacts(day: RoomDay, names: Names): string[] {
   ];
 }
 
-/** The end of the day by the odds, on the grid of the plan's step: never finer than what was planned. */
-function endsOf(day: RoomDay, plan: MadePlan, file: ProductionFile, zone: ZoneClock): RunRoom['ends'] {
+/** The end of the day by the odds (clock times), later onto the grid of the plan's step: never finer than what was planned. */
+function endsOf(day: RoomDay, plan: MadePlan, file: ProductionFile): RunRoom['ends'] {
   const odds = plan.odds.days.find((one) => one.room === day.room.id && one.date === day.date);
   if (!odds) return null;
   const step = file.production.rules?.step ?? DEFAULT_RULES.step;
-  const onGrid = (wall: WallTime) => {
-    const minute = zone.minuteOf(wall);
-    const past = Number(wall.slice(11, 13)) * 60 + Number(wall.slice(14, 16));
-    return minute === 'gap' ? clock(wall) : clock(zone.wallOf(minute + ((step - (past % step)) % step)));
+  const onGrid = (time: string) => {
+    const [hour = 0, minute = 0] = time.split(':').map(Number);
+    const later = (Math.ceil((hour * 60 + minute) / step) * step) % 1440;
+    return [Math.floor(later / 60), later % 60].map((figure) => String(figure).padStart(2, '0')).join(':');
   };
   return { half: onGrid(odds.p50), nineInTen: onGrid(odds.p90) };
 }

@@ -29,7 +29,7 @@ export interface SheetHead {
   code: string;
   title: string;
   paper: Paper;
-  /** `version 3`, or `DRAFT`. */
+  /** `Version 3`, or `DRAFT`. */
   edition: string;
   draft: boolean;
   /** `printed Tue 1 December 2026 14:30`. */
@@ -48,7 +48,7 @@ export function sheetHead(
     code,
     title,
     paper: paper ?? file.production.paper ?? 'A4',
-    edition: edition.version === null ? 'DRAFT' : `version ${edition.version}`,
+    edition: edition.version === null ? 'DRAFT' : `Version ${edition.version}`,
     draft: edition.version === null,
     printed: `printed ${fullDate(edition.printed.slice(0, 10))} ${clock(edition.printed)}`,
   };
