@@ -48,7 +48,7 @@ export const NO_CONTROL_CHARACTERS = 'text without control characters';
 export const unprintableAt = (value: string): number => value.search(UNPRINTABLE);
 
 /** One line or more of text without control characters other than line breaks and tabs. */
-export const text = (max = 2000) =>
+export const text = (max = 10_000) =>
   z
     .string({ error: ({ input }) => (input === undefined ? 'text' : 'text; put numbers and true or false in quotes') })
     .max(max, { error: `text of at most ${max} characters` })
