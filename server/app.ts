@@ -44,6 +44,8 @@ const withoutToken = (url: string) => url.replace(/^(\/(?:calendar|guest|invitat
 export function createApp(context: Context): Express {
   const app = express();
   app.disable('x-powered-by');
+  // Answers of the API are never kept; a calendar sets a tag of its own.
+  app.disable('etag');
   app.use(
     pinoHttp({
       logger: context.log,

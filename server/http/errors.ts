@@ -1,6 +1,6 @@
 import type { NextFunction, Request, Response } from 'express';
 import multer from 'multer';
-import { ConnectionError, ForeignKeyConstraintError, UniqueConstraintError } from 'sequelize';
+import { ConnectionError, DatabaseError, ForeignKeyConstraintError, UniqueConstraintError } from 'sequelize';
 import type { Fault, ProblemDetails } from '../../shared/contracts/api';
 
 const TITLES = {
@@ -54,6 +54,10 @@ export function sendProblem(response: Response, refusal: Refusal): void {
 
 const codeOf = (error: unknown) => (typeof error === 'object' && error !== null && 'type' in error ? error.type : undefined);
 
+/** SQLSTATEs of a statement that gave way to others: cancelled by its time limit, lost a deadlock, or could not be put in a row. */
+const GAVE_WAY = new Set(['57014', '40P01', '40001']);
+const stateOf = (error: DatabaseError) => ('code' in error.original ? String(error.original.code) : '');
+
 /** What the libraries throw, said in our words; null where the error is not known. */
 function knownRefusal(error: unknown): Refusal | null {
   if (error instanceof Refusal) return error;
@@ -71,6 +75,8 @@ function knownRefusal(error: unknown): Refusal | null {
     return new Refusal('conflict', 'Something it names was removed just now. Load the page again.');
   if (error instanceof ConnectionError)
     return new Refusal('unavailable', 'The database does not answer. Nothing was changed: try again in a moment.');
+  if (error instanceof DatabaseError && GAVE_WAY.has(stateOf(error)))
+    return new Refusal('unavailable', 'Many people are saving just now. Nothing was changed: try again in a moment.');
   switch (codeOf(error)) {
     case 'entity.parse.failed':
     case 'encoding.unsupported':

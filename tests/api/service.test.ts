@@ -3,10 +3,12 @@ import os from 'node:os';
 import path from 'node:path';
 import { Writable } from 'node:stream';
 import { pino } from 'pino';
+import { QueryTypes } from 'sequelize';
 import request from 'supertest';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { createApp } from '../../server/app';
 import { openDatabase } from '../../server/models/database';
+import { dropOldSessions, startJobs } from '../../server/jobs';
 import { readConfig } from '../../server/config';
 import { PASSWORD } from '../factories/accounts';
 import { openApp, type OpenApp } from '../support/app';
@@ -97,6 +99,29 @@ describe('the log', () => {
     expect(said).toContain('/api/session');
     for (const secret of [cookie, PASSWORD, 'a wrong password', 'a-token-of-a-link', 'unlogged@example.org'])
       expect(said).not.toContain(secret);
+  });
+});
+
+describe('the queue', () => {
+  it('starts inside the database, knows its work, and stops', async () => {
+    const jobs = await startJobs(open.context);
+    const rows = await open.db.sequelize.query('select name, cron from jobs.schedule', { type: QueryTypes.SELECT });
+    expect(rows).toEqual([{ name: 'housekeeping', cron: '17 3 * * *' }]);
+    await jobs.stop();
+  });
+
+  it('drops the sessions that are over, and only those', async () => {
+    const own = await openApp();
+    const [ended, expired, kept] = [request.agent(own.app), request.agent(own.app), request.agent(own.app)];
+    await expired.post('/api/session/trial').expect(201);
+    own.wait(31 * 24 * 60 * 60 * 1000);
+    for (const agent of [ended, kept]) await agent.post('/api/session/trial').expect(201);
+    await ended.delete('/api/session').expect(204);
+    expect(await own.db.sessions.count()).toBe(3);
+    await dropOldSessions(own.context);
+    expect(await own.db.sessions.count()).toBe(1);
+    await kept.get('/api/productions').expect(200);
+    await own.close();
   });
 });
 

@@ -20,7 +20,8 @@ export async function lockProduction(context: Context, productionId: string, tra
   const production = await context.db.productions.findByPk(productionId, {
     attributes: ['id', 'revision'],
     transaction,
-    lock: transaction.LOCK.UPDATE,
+    // Weaker than a lock for deleting: rows that only refer to the production need not wait.
+    lock: transaction.LOCK.NO_KEY_UPDATE,
   });
   if (!production) throw new Refusal('not-found', 'This production was deleted. Go back to the start page.');
   return production;

@@ -102,10 +102,13 @@ export async function listProductions({ db }: Context, actor: Actor): Promise<Pr
 
 /** What a member's device holds: every row they may see, or those written after a revision. */
 export async function snapshotOf(context: Context, member: Membership, since: number | undefined): Promise<Snapshot> {
-  const { revision, rows } = await readProduction(context, member.productionId);
+  const known = await context.db.productions.findByPk(member.productionId, { attributes: ['revision'] });
   const newest = await context.db.versions.max<number | null, VersionModel>('number', { where: { productionId: member.productionId } });
+  const head = { id: member.productionId, role: member.role, version: newest ?? null };
+  if (known && since !== undefined && since >= known.revision) return { ...head, revision: known.revision, rows: [] };
+  const { revision, rows } = await readProduction(context, member.productionId);
   const fresh = rows.all().filter((row) => since === undefined || row.revision > since);
-  return { id: member.productionId, role: member.role, revision, version: newest ?? null, rows: presentRows(fresh, member) };
+  return { ...head, revision, rows: presentRows(fresh, member) };
 }
 
 /** The production file as this member may see it, with its code for the name of the download. */
