@@ -200,6 +200,16 @@ export const usePlan = defineStore('plan', () => {
     solving.value = null;
   }
 
+  /** Takes a change that the plan already keeps (a pass pinned where it stands) for what it was made from. */
+  function holdsStill(change: () => boolean): boolean {
+    const fresh = !stale.value;
+    const taken = change();
+    if (!taken || !fresh || !shown.value) return taken;
+    shown.value = { ...shown.value, madeFrom: fingerprint.value, draft: shown.value.version === null ? null : shown.value.draft };
+    void keep();
+    return taken;
+  }
+
   /** Keeps the plan on the server as a draft, so that another device finds it; true when it is there. */
   async function keep(): Promise<boolean> {
     const plan = shown.value;
@@ -257,6 +267,7 @@ export const usePlan = defineStore('plan', () => {
     solve,
     cancel,
     stop,
+    holdsStill,
     keep,
     publish,
   };

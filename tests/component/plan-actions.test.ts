@@ -19,15 +19,17 @@ function desk(start: ProductionFile = sampleFile()) {
   );
   const said: string[] = [];
   const planned = ref(0);
+  const apply = (edits: Edit[]): boolean => {
+    rows.value = new Map(rowsAfter(rows.value, edits, 1));
+    return true;
+  };
   const file = computed(() => fileOf([...rows.value.values()]));
   const actions = usePlanActions({
     file,
     days: computed(() => planDays(file.value, samplePlan())),
     mayChange: computed(() => true),
-    apply: (edits: Edit[]) => {
-      rows.value = new Map(rowsAfter(rows.value, edits, 1));
-      return true;
-    },
+    apply,
+    applyInPlace: apply,
     replan: () => (planned.value += 1),
     say: (sentence) => said.push(sentence),
   });

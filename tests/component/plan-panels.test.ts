@@ -56,7 +56,7 @@ describe('the number line', () => {
   it('leaves money out for whoever does not see it, and says when the plan is old', () => {
     const figures = planFigures(planSummary(file, samplePlan()), null, true);
     expect(figures.some(({ figure }) => figure.includes('€'))).toBe(false);
-    expect(figures.filter(({ look }) => look).map(({ figure }) => figure)).toEqual(['older than the songs', '1 left out']);
+    expect(figures.filter(({ look }) => look).map(({ figure }) => figure)).toEqual(['out of date', '1 left out']);
   });
 
   it('says how far from the best a plan may be, only as far as it is known', () => {

@@ -24,7 +24,7 @@ export function planFigures(summary: PlanSummary, money: PlanMoney | null, stale
   const { musts, odds, waiting, changeovers, warnings } = summary;
   const worst = waiting.worst;
   const most = worst ? `, most: ${worst.person} ${length(worst.minutes)} ${dayWords(worst.date).slice(0, WEEKDAY)}` : '';
-  const old = stale ? [{ figure: 'older than the songs', words: 'Ctrl+Enter plans again', look: true }] : [];
+  const old = stale ? [{ figure: 'out of date', words: 'Ctrl+Enter plans again', look: true }] : [];
   return [
     { figure: `${musts.placed} of ${musts.all}`, words: 'musts placed', look: musts.placed < musts.all },
     { figure: oddsInWords(odds), words: 'odds that all musts get done' },

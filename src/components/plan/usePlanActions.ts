@@ -15,6 +15,8 @@ interface Desk {
   mayChange: ComputedRef<boolean>;
   /** Applies edits; false where they were refused. */
   apply: (edits: Edit[]) => boolean;
+  /** Applies edits that the plan as it stands already keeps. */
+  applyInPlace: (edits: Edit[]) => boolean;
   /** Plans again around what has changed. */
   replan: () => void;
   say: (sentence: string) => void;
@@ -27,7 +29,7 @@ export interface LastAction {
 }
 
 /** Pins, moves and leaving out: each is a change of the production, said aloud, and can be taken back. */
-export function usePlanActions({ file, days, mayChange, apply, replan, say }: Desk): {
+export function usePlanActions({ file, days, mayChange, apply, applyInPlace, replan, say }: Desk): {
   last: Ref<LastAction | null>;
   togglePin: (pass: PassId) => void;
   unpin: (pass: PassId) => void;
@@ -44,7 +46,8 @@ export function usePlanActions({ file, days, mayChange, apply, replan, say }: De
     if (!before || !mayChange.value) return;
     const known: Record<string, unknown> = { ...before };
     const old = Object.fromEntries(Object.keys(fields).map((field) => [field, known[field] ?? null]));
-    if (!apply(editsToSetPass(file.value, id, fields))) return say('That was not taken; see what was refused at the top right.');
+    const taken = (thenPlan ? apply : applyInPlace)(editsToSetPass(file.value, id, fields));
+    if (!taken) return say('That was not taken; see what was refused at the top right.');
     last.value = { says, back: [{ resource: 'passes', key: id, op: 'update', fields: old }] };
     say(says);
     if (thenPlan) replan();

@@ -56,7 +56,7 @@ export function usePlanPage(): {
   const summary = computed(() => (plan.drawn ? planSummary(file.value, plan.drawn) : null));
   const seesMoney = computed(() => !(hiddenPaths({ role: production.role, person: null }, 'rooms', '')?.includes('price') ?? true));
   const money = computed(() => (plan.drawn && seesMoney.value && hasPrices(file.value) ? planMoney(file.value, plan.drawn) : null));
-  const figures = computed(() => (summary.value ? planFigures(summary.value, money.value, plan.stale) : []));
+  const figures = computed(() => (summary.value ? planFigures(summary.value, money.value, plan.stale && !plan.failed) : []));
 
   const subtitle = computed(() => {
     if (!plan.drawn) return '';
