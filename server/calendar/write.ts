@@ -60,7 +60,6 @@ export function writeCalendar(feed: CalendarFeed): string {
     name: escape(feed.name, false),
     ttl: REFRESH_SECONDS,
     ...(feed.source === undefined ? {} : { source: feed.source }),
-    x: [{ key: 'X-WR-TIMEZONE', value: feed.timezone }],
   });
   for (const event of feed.events) {
     const instant = (wall: WallTime) => Temporal.PlainDateTime.from(wall).toZonedDateTime(feed.timezone);
@@ -78,12 +77,14 @@ export function writeCalendar(feed: CalendarFeed): string {
       status: STATUS[event.status],
     });
   }
-  return withTimezone(`${calendar.toString()}\r\n`, block);
+  return withZone(`${calendar.toString()}\r\n`, feed.timezone, block);
 }
 
-/** Properties of a calendar come before its components, so the zone goes in front of the first event; alone, it keeps an empty calendar valid. */
-function withTimezone(text: string, block: string | null): string {
-  if (block === null) return text;
+/**
+ * Puts the zone in front of the first event: properties of a calendar come before its components, and a zone alone keeps an empty
+ * calendar valid. X-WR-TIMEZONE is what many readers still look for (common practice, no source).
+ */
+function withZone(text: string, zone: string, block: string | null): string {
   const at = text.search(/^(?:BEGIN:VEVENT|END:VCALENDAR)\r$/m);
-  return `${text.slice(0, at)}${block}\r\n${text.slice(at)}`;
+  return `${text.slice(0, at)}X-WR-TIMEZONE:${zone}\r\n${block === null ? '' : `${block}\r\n`}${text.slice(at)}`;
 }

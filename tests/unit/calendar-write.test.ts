@@ -152,6 +152,7 @@ describe('a calendar of calls', () => {
     const component = lines.findIndex((line) => line === 'BEGIN:VTIMEZONE');
     expect(lines.findIndex((line) => line.startsWith('REFRESH-INTERVAL'))).toBeLessThan(component);
     expect(component).toBeLessThan(lines.indexOf('BEGIN:VEVENT'));
+    expect(lines.slice(lines.indexOf('BEGIN:VEVENT')).filter((line) => line.startsWith('X-WR'))).toEqual([]);
   });
 
   it('keeps a cancelled call, and says so', () => {
@@ -178,7 +179,7 @@ describe('the words of a call', () => {
       '13:00 S1 Weir Song: lead vocal, guide · D · 96 · 4/4 · click',
       '14:05 Meal',
     ]);
-    expect(lines).toContain('Bring acoustic guitar, spare strings, capo, tea');
+    expect(lines).toContain('Bring: acoustic guitar, spare strings, capo, tea');
   });
 
   it('carry no money and nothing that belongs on paper only', () => {

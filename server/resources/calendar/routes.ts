@@ -1,4 +1,5 @@
 import type { Context } from '../../context';
+import { hasNewest } from '../../http/conditional';
 import { originOf } from '../../http/origin';
 import type { Routes } from '../../http/routes';
 import { readFeed } from './service';
@@ -8,14 +9,9 @@ export function calendarRoutes(routes: Routes, context: Context): void {
   routes.anyone('get', '/calendar/:token.ics', {
     run: ({ params, request }) => readFeed(context, params.token, `${originOf(request)}${request.path}`),
     send: (response, feed) => {
-      response.set({
-        'Content-Type': 'text/calendar; charset=utf-8',
-        'Cache-Control': 'private, no-cache',
-        ETag: feed.tag,
-        'Last-Modified': feed.changedAt.toUTCString(),
-      });
-      // Express answers 304 where If-None-Match or If-Modified-Since says that nothing is new.
-      response.send(feed.text);
+      response.set({ 'Cache-Control': 'private, no-cache', ETag: feed.tag, 'Last-Modified': feed.changedAt.toUTCString() });
+      if (hasNewest(response.req, feed.tag, feed.changedAt)) response.status(304).end();
+      else response.type('text/calendar; charset=utf-8').send(feed.text);
     },
   });
 }

@@ -23,7 +23,12 @@ function describe(day: CallDay, facts: readonly CallFact[]): string {
     const details = [line.part, line.key, line.tempo, line.note].filter((text) => text !== '').join(' · ');
     return `${line.from} ${what}${details === '' ? '' : `: ${details}`}`;
   });
-  return [`Ready to play ${day.ready}, free to go ${range}`, ...lines, '', ...facts.map((fact) => `${fact.label} ${fact.says}`)]
+  return [
+    `Ready to play ${day.ready}, free to go ${range}`,
+    ...lines,
+    '',
+    ...facts.map(({ label, says }) => `${label}${label.endsWith('?') ? '' : ':'} ${says}`),
+  ]
     .join('\n')
     .trim();
 }
