@@ -8,7 +8,7 @@ import { fingerprint, mark, unmark } from './sources.mjs';
 
 /** The server's programs: the server itself, the plan command, and one file per worker thread. */
 function serverEntries() {
-  const named = { index: 'server/index.ts', plan: 'server/bin/plan.ts' };
+  const named = { index: 'server/index.ts', plan: 'server/bin/planCommand.ts' };
   const entries = Object.entries(named).filter(([, file]) => fs.existsSync(file));
   for (const file of fs.readdirSync('server', { recursive: true }))
     if (file.endsWith('.worker.ts')) entries.push([path.basename(file, '.ts'), path.join('server', file)]);
