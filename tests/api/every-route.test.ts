@@ -175,6 +175,10 @@ const expectations: Record<string, Expectation> = {
       return who.delete(within(`/links/${(link.body as NewLink).id}`));
     },
   },
+  'GET /api/productions/:production/sheets/plan': {
+    statuses: [200, 200, 200, 200, 403, 404, 401],
+    send: (who) => who.get(within('/sheets/plan?version=1')),
+  },
   'GET /api/productions/:production/sheets/run-sheet.pdf': {
     statuses: crew(200),
     send: (who) => who.get(within('/sheets/run-sheet.pdf?version=1&date=2027-03-08')),

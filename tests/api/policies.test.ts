@@ -3,7 +3,7 @@ import type { HistoryEntry, Snapshot } from '../../shared/contracts/api';
 import type { ChangesResponse } from '../../shared/contracts/changes';
 import { roles, type Role } from '../../shared/contracts/roles';
 import { memberOf, productionOf, someone, type Agent } from '../factories/accounts';
-import { aChange, smallProduction } from '../factories/productions';
+import { aChange, smallPlan, smallProduction } from '../factories/productions';
 import { openApp, type OpenApp } from '../support/app';
 
 /** Every secret is a text or number that stands nowhere else, so that it can be looked for in whole answers. */
@@ -43,6 +43,9 @@ beforeAll(async () => {
   id = await productionOf(agents.producer, secretProduction());
   for (const role of roles) if (role !== 'producer') agents[role] = await memberOf(open.app, agents.producer, id, role);
   agents.una = await memberOf(open.app, agents.producer, id, 'musician', 'una');
+  const draft = { inputRevision: 1, seed: 1, iterations: 1, outcome: smallPlan(660) };
+  const plan = await agents.producer.post(`/api/productions/${id}/plans`).send(draft).expect(201);
+  await agents.producer.post(`/api/productions/${id}/versions`).send({ plan: plan.body.id }).expect(201);
 });
 afterAll(() => open.close());
 
@@ -76,6 +79,19 @@ describe('what a role reads', () => {
       expect(answer.status).toBe(kinds ? 200 : 403);
       expect(seen(answer.text)).toEqual(kinds ?? []);
     }
+  });
+
+  it.each<[Role, string[] | null]>([
+    ['producer', ['money', 'contacts', 'place', 'plans']],
+    ['engineer', ['contacts', 'place', 'plans']],
+    ['assistant', ['contacts', 'place', 'plans']],
+    ['musician', ['place']],
+    ['guest', null],
+  ])('%s: in the production that a published version keeps for its sheets, %j', async (role, kinds) => {
+    const answer = await agents[role].get(`/api/productions/${id}/sheets/plan?version=1`);
+    expect(answer.status).toBe(kinds ? 200 : 403);
+    expect(seen(answer.text)).toEqual(kinds ?? []);
+    expect(seen((await agents[role].get(`/api/productions/${id}/versions/1`).expect(200)).text)).toEqual([]);
   });
 
   it('of their own row a musician reads contacts and times, but no fee', async () => {
