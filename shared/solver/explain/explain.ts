@@ -10,9 +10,9 @@ import { personMinutes } from './necessary/person-minutes';
 import { placement } from './necessary/placement';
 import { ring } from './necessary/ring';
 import { roomMinutes } from './necessary/room-minutes';
-import { stateFile, type Statement } from './statement';
+import { stateFile } from './statement';
 import { viewOf } from './view';
-import { factWords } from './words';
+import { reasonWords } from './words';
 
 /** From what is plain to what takes many facts together. */
 const CONDITIONS: readonly NecessaryCondition[] = [
@@ -47,7 +47,7 @@ export function explainImpossible(file: ProductionFile, stop: () => boolean): Co
         if (condition.fails(view, subject) === null) break;
         const { facts, dropped } = narrow(statement, condition, subject, settled);
         const headline = condition.fails(viewOf(statement, dropped), subject) ?? condition.name;
-        conflicts.push({ facts: named(facts), says: `${headline}: ${reasons(statement, condition.bare ? named(facts) : facts)}.` });
+        conflicts.push({ facts: named(facts), says: `${headline}: ${reasonWords(statement, condition.bare ? named(facts) : facts)}.` });
         for (const fact of facts) if (isSubject(fact)) settled.add(fact);
         view = viewOf(statement, settled);
       }
@@ -63,8 +63,4 @@ const isSubject = (fact: string): boolean => /^(passes|events)\.[^.]+$/.test(fac
 /** A field of a pass names the pass already. */
 function named(facts: readonly string[]): string[] {
   return facts.filter((fact) => !facts.some((other) => other.startsWith(`${fact}.`))).sort();
-}
-
-function reasons(statement: Statement, facts: readonly string[]): string {
-  return facts.map((fact) => factWords(statement, fact)).join('; ');
 }

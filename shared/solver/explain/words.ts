@@ -1,5 +1,5 @@
 import type { Pass } from '../../contracts/resources';
-import type { WallTime } from '../../domain/flavours';
+import type { Minutes, WallTime } from '../../domain/flavours';
 import { eventName, passInWords } from '../../domain/passes';
 import { clock, dateOfWall, dayWords, length } from '../../time/words';
 import type { Statement } from './statement';
@@ -8,6 +8,8 @@ import { castOf, roomIdOf } from './view';
 /** Facts of a file as clauses of a sentence that a producer understands. */
 
 const MOST_WINDOWS = 4;
+/** More passes than this are not told one by one. */
+const MOST_PASSES = 4;
 
 export function passWords(statement: Statement, id: string): string {
   const pass = statement.passes.get(id);
@@ -38,13 +40,22 @@ export function spanWords({ from, to }: { from: WallTime; to: WallTime }): strin
   return `${dayWords(dateOfWall(from))} ${clock(from)}–${end}`;
 }
 function windowsWords(windows: readonly { from: WallTime; to: WallTime }[]): string {
-  if (windows.length === 0) return 'never';
   const words = [...windows].sort((one, other) => (one.from < other.from ? -1 : 1)).map(spanWords);
   const more = words.length - MOST_WINDOWS;
   return more > 1 ? `${words.slice(0, MOST_WINDOWS).join(', ')} and ${more} times more` : listWords(words);
 }
 export function momentWords(wall: WallTime): string {
   return `${dayWords(dateOfWall(wall))} ${clock(wall)}`;
+}
+
+/** The facts of a clash as the reasons for it; many passes that only take their time are told in one. */
+export function reasonWords(statement: Statement, facts: readonly string[]): string {
+  const plain = facts.filter((fact) => /^passes\.[^.]+$/.test(fact));
+  if (plain.length <= MOST_PASSES) return facts.map((fact) => factWords(statement, fact)).join('; ');
+  const ids = plain.map((fact) => fact.slice(fact.indexOf('.') + 1));
+  const sum = ids.reduce((minutes, id) => minutes + likelyMinutes(statement.passes.get(id)!), 0);
+  const others = facts.filter((fact) => !plain.includes(fact)).map((fact) => factWords(statement, fact));
+  return [...others, `${listWords(ids.map((id) => passWords(statement, id)))} take ${length(sum)} together`].join('; ');
 }
 
 /** What a fact says, for the second half of a sentence. */
@@ -58,7 +69,8 @@ export function factWords(statement: Statement, fact: string): string {
     case 'gear': {
       const gear = statement.gear.get(id)?.gear;
       if (field === 'count') return `there is ${gear?.count ?? 1} of ${gearWords(statement, id)}`;
-      return `${gearWords(statement, id)} is there ${windowsWords(gear?.windows ?? [])}`;
+      const windows = gear?.windows ?? [];
+      return `${gearWords(statement, id)} is ${windows.length > 0 ? `there ${windowsWords(windows)}` : 'never there'}`;
     }
     case 'events': {
       const event = statement.events.get(id)!.event;
@@ -89,9 +101,9 @@ function personFact(statement: Statement, id: string, field: string | undefined)
 function roomFact(statement: Statement, id: string, field: string | undefined): string {
   const { room } = statement.rooms.get(id)!;
   const name = roomWords(statement, id);
-  if (field === 'people') return `${name} holds ${room.people} people`;
-  if (field === 'loud') return `${name} may be loud ${windowsWords(room.loud ?? [])}`;
-  return `${name} is open ${windowsWords(room.open)}`;
+  if (field === 'people') return `${name} holds ${room.people === 1 ? 'one person' : `${room.people} people`}`;
+  if (field === 'loud') return `${name} may ${room.loud?.length ? `be loud ${windowsWords(room.loud)}` : 'never be loud'}`;
+  return `${name} is ${room.open.length > 0 ? `open ${windowsWords(room.open)}` : 'never open'}`;
 }
 
 function ruleWords(statement: Statement, name: string): string {
@@ -157,11 +169,15 @@ function afterWords(statement: Statement, one: { pass: string; kind?: string; la
 }
 
 function placeWords(statement: Statement, pass: Pass): string {
-  const likely = typeof pass.minutes === 'number' ? pass.minutes : pass.minutes.length === 3 ? pass.minutes[1] : pass.minutes[0];
   const room = roomIdOf(statement, pass);
   const cast = castOf(statement, pass).map((person) => personWords(statement, person));
   const where = room === undefined ? 'in no room' : `in ${roomWords(statement, room)}`;
-  return `${likely} min ${where}${cast.length > 0 ? ` with ${listWords(cast)}` : ''}`;
+  return `${likelyMinutes(pass)} min ${where}${cast.length > 0 ? ` with ${listWords(cast)}` : ''}`;
+}
+
+function likelyMinutes({ minutes }: Pass): Minutes {
+  if (typeof minutes === 'number') return minutes;
+  return minutes.length === 3 ? minutes[1] : minutes[0];
 }
 
 function pinWords({ pin }: Pass): string {
