@@ -15,6 +15,7 @@ export function createAppRouter(): Router {
         component: () => import('../views/ProductionView.vue'),
         redirect: (to) => ({ name: sections[0].name, params: to.params }),
         children: [
+          { path: 'production', name: 'production', component: () => import('../views/AboutView.vue') },
           { path: 'songs', name: 'songs', component: () => import('../views/SongsView.vue') },
           { path: 'people', name: 'people', component: () => import('../views/PeopleView.vue') },
           { path: 'rooms', name: 'rooms', component: () => import('../views/RoomsView.vue') },
