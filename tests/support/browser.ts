@@ -1,7 +1,7 @@
 import fs from 'node:fs';
 import { createRequire } from 'node:module';
 import type { AxeResults } from 'axe-core';
-import puppeteer, { type Browser, type ElementHandle, type KeyInput, type Page, type SerializedAXNode } from 'puppeteer-core';
+import puppeteer, { type Browser, type ElementHandle, type KeyInput, type Page } from 'puppeteer-core';
 
 const axeSource = fs.readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
 
@@ -67,24 +67,27 @@ export async function findingsOfAxe(page: Page): Promise<string[]> {
 export const sidewaysScroll = (page: Page): Promise<number> =>
   page.evaluate(() => document.documentElement.scrollWidth - document.documentElement.clientWidth);
 
-function focusedIn(node: SerializedAXNode): SerializedAXNode | null {
-  for (const child of node.children ?? []) {
-    const found = focusedIn(child);
-    if (found) return found;
-  }
-  return node.focused && node.role !== 'RootWebArea' ? node : null;
-}
-
 export interface Focus {
   role: string;
   name: string;
 }
 
+/** The element that has the focus; null where none has it. */
+async function activeElement(page: Page): Promise<ElementHandle<Element> | null> {
+  const handle = await page.evaluateHandle(() => (document.activeElement === document.body ? null : document.activeElement));
+  return handle.asElement() as ElementHandle<Element> | null;
+}
+
+/** An element as a screen reader tells it. */
+async function toldAs(page: Page, element: ElementHandle<Element>): Promise<Focus> {
+  const node = await page.accessibility.snapshot({ root: element, interestingOnly: false });
+  return { role: node?.role ?? '', name: node?.name ?? '' };
+}
+
 /** The control that has the focus, as a screen reader tells it; null where none has it. */
 export async function focused(page: Page): Promise<Focus | null> {
-  const tree = await page.accessibility.snapshot({ interestingOnly: false });
-  const node = tree && focusedIn(tree);
-  return node ? { role: node.role, name: node.name ?? '' } : null;
+  const element = await activeElement(page);
+  return element && toldAs(page, element);
 }
 
 export async function press(page: Page, ...keys: (KeyInput | `${'Control' | 'Alt' | 'Shift'}+${KeyInput}`)[]): Promise<void> {
@@ -104,9 +107,12 @@ interface TabStop extends Focus {
 }
 
 /** What is painted where an element stands, with a margin for its focus ring. */
-async function paintedAt(page: Page, element: ElementHandle): Promise<string> {
-  const box = await element.boundingBox();
-  if (!box || box.width === 0 || box.height === 0) return '';
+async function paintedAt(page: Page, element: ElementHandle<Element>): Promise<string> {
+  const box = await element.evaluate((node) => {
+    const { x, y, width, height } = node.getBoundingClientRect();
+    return { x: x + scrollX, y: y + scrollY, width, height };
+  });
+  if (box.width === 0 || box.height === 0) return '';
   const clip = { x: Math.max(0, box.x - 6), y: Math.max(0, box.y - 6), width: box.width + 12, height: box.height + 12 };
   return page.screenshot({ clip, encoding: 'base64', captureBeyondViewport: true });
 }
@@ -117,10 +123,9 @@ export async function walkByTab(page: Page, { limit = 150 } = {}): Promise<TabSt
   await page.evaluate(() => document.body.querySelectorAll('[data-walked]').forEach((element) => element.removeAttribute('data-walked')));
   while (stops.length < limit) {
     await page.keyboard.press('Tab');
-    const active = (await page.evaluateHandle(() => document.activeElement)).asElement() as ElementHandle<Element> | null;
-    const again = await active?.evaluate((element) => element === document.body || element.hasAttribute('data-walked'));
-    if (!active || again !== false) break;
-    const now = await focused(page);
+    const active = await activeElement(page);
+    if (!active || (await active.evaluate((element) => element.hasAttribute('data-walked')))) break;
+    const told = await toldAs(page, active);
     const withFocus = await paintedAt(page, active);
     const element = await active.evaluate((node) => {
       node.setAttribute('data-walked', '');
@@ -128,7 +133,7 @@ export async function walkByTab(page: Page, { limit = 150 } = {}): Promise<TabSt
       return node.outerHTML.slice(0, 120);
     });
     const without = await paintedAt(page, active);
-    stops.push({ role: now?.role ?? '', name: now?.name ?? '', element, visible: withFocus !== '' && withFocus !== without });
+    stops.push({ ...told, element, visible: withFocus !== '' && withFocus !== without });
   }
   return stops;
 }

@@ -32,7 +32,7 @@ export async function publishDemo(address: string, { before }: DemoOptions = {})
   await before?.(client, id);
   const { revision } = await client.json<Snapshot>('GET', `/api/productions/${id}`);
   const file = await exported(client, id);
-  const work = { seed: 1, iterations: 100 };
+  const work = { seed: 1, iterations: 1000 };
   const outcome = planProduction(file, { ...work, stop: () => false });
   if (outcome.cost === null) throw new Error(`The demo has no plan: ${outcome.status}`);
   const plan = await client.json<Draft>('POST', `/api/productions/${id}/plans`, { inputRevision: revision, ...work, outcome });
