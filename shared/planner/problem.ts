@@ -94,7 +94,10 @@ export function toProblem(file: ProductionFile): Problem {
     hidden,
   };
   problem.passes = passModels(reader, effectivePasses(file), problem);
-  problem.passes.forEach((pass, i) => pass.people.forEach((person) => problem.people[person]!.passes.push(i)));
+  problem.passes.forEach((pass, i) => {
+    for (const person of pass.people) problem.people[person]!.passes.push(i);
+    for (const { gear } of pass.uses) problem.gear[gear]!.passes.push(i);
+  });
   return problem;
 }
 
@@ -232,5 +235,6 @@ function gearModels(reader: Reader): GearModel[] {
     id: gear.id,
     count: gear.count ?? 1,
     windows: gear.windows ? merged(gear.windows.map(reader.span)) : null,
+    passes: [],
   }));
 }

@@ -1,6 +1,6 @@
 import type { Minute, Minutes } from '../domain/flavours';
 import { CHANGEOVER, RIG, type Board } from './board';
-import { gridAtOrAfter } from './grid';
+import { gridAtOrAfter, nameable } from './grid';
 import { EVER, within, type Problem } from './model';
 import { BREAK, MEAL, Rests } from './rests';
 import { layTail, reserveOf, type TailSink } from './tail';
@@ -126,30 +126,19 @@ export class Closer {
     this.sink?.work('reserve', this.day, start, start + length);
   }
 
+  /** A meal where the last one is long enough ago, and a break where there is time for one; what is left of the gap stays idle. */
   private pause(from: Minute, to: Minute): void {
-    const { rules, lengths, days } = this.problem;
-    const { grid } = days[this.day]!;
-    const start = gridAtOrAfter(grid, rules.step, from);
-    let end = to - ((((to - start) % rules.step) + rules.step) % rules.step);
-    let length = end - start;
-    const mealFits = rules.meal > 0 && length >= lengths.meal;
-    if (grid.length > 1) {
-      // Across a clock change a pause stays as short as it may be, so that its end is on the grid.
-      const wanted = mealFits ? lengths.meal : lengths.break;
-      if (length < wanted) return;
-      end = start + wanted;
-      length = wanted;
-      if (gridAtOrAfter(grid, rules.step, end) !== end) return;
+    const { rules, lengths, hidden } = this.problem;
+    const { grid } = this.problem.days[this.day]!;
+    let start = gridAtOrAfter(grid, rules.step, from);
+    const fits = (length: Minutes) => start + length <= to && nameable(hidden, start + length) === start + length;
+    const meal = rules.meal > 0 && fits(lengths.meal);
+    if (meal && start - this.lastMeal >= rules.mealAfter / 2) {
+      this.lastMeal = start + lengths.meal;
+      this.rests.add(MEAL, start, this.lastMeal, this.day);
+      start = gridAtOrAfter(grid, rules.step, this.lastMeal);
     }
-    if (mealFits && start - this.lastMeal >= rules.mealAfter / 2) {
-      const rest = length - lengths.meal;
-      const split = rules.break > 0 && rest >= lengths.break;
-      const mealEnd = split ? start + lengths.meal : end;
-      this.rests.add(MEAL, start, mealEnd, this.day);
-      this.lastMeal = mealEnd;
-      if (split) this.rests.add(BREAK, mealEnd, end, this.day);
-    } else if (rules.break > 0 && length >= lengths.break) this.rests.add(BREAK, start, end, this.day);
-    else if (mealFits) this.rests.add(MEAL, start, end, this.day);
+    if (rules.break > 0 && fits(lengths.break)) this.rests.add(BREAK, start, start + lengths.break, this.day);
   }
 
   private closePerson(q: number, date: number): void {

@@ -7,17 +7,25 @@ import { Placer } from './placing';
 import type { Solution } from './solution';
 import { layTail, reserveOf } from './tail';
 
-/** How good a timetable is: missing musts first, then the cost. */
+/** How good a timetable is: missing musts first, then the cost; of two equal ones the less strained is better. */
 export interface Score {
   missing: number;
   total: number;
+  strain: number;
 }
 
-export const WORST: Score = { missing: Infinity, total: Infinity };
+export const WORST: Score = { missing: Infinity, total: Infinity, strain: Infinity };
+/** Totals that differ by less are equal: sums of weights with fractions. */
+const HAIR = 1e-6;
 
 export function better(one: Score, other: Score): boolean {
-  return one.missing < other.missing || (one.missing === other.missing && one.total < other.total);
+  if (one.missing !== other.missing) return one.missing < other.missing;
+  if (one.total < other.total - HAIR) return true;
+  return one.total < other.total + HAIR && one.strain < other.strain;
 }
+
+/** Minutes that a pass likes to have between its likely end and the latest one that people, gear, hours and pins allow. */
+const EASE = 90;
 
 /** A state of the decoder: the board's memory and the tally. */
 class Snapshot {
@@ -251,12 +259,18 @@ export class Decoder {
     const { weights, passes } = problem;
     let missing = valid ? 0 : Infinity;
     let unplaced = 0;
+    let strain = 0;
     for (let pass = 0; pass < passes.length; pass++) {
-      if (board.start[pass]! >= 0) continue;
       const model = passes[pass]!;
+      if (board.start[pass]! >= 0) {
+        strain += this.strainOf(pass);
+        continue;
+      }
       if (model.priority !== 'must') unplaced += model.unplaced;
       else if (!model.leftOut) missing += 1;
     }
+    for (let day = 0; day < problem.days.length; day++) if (board.head[day]! >= 0) strain += board.last[day]! - problem.days[day]!.from;
+    score.strain = strain;
     score.missing = missing;
     score.total =
       tally.waiting +
@@ -266,5 +280,17 @@ export class Decoder {
       weights.call * tally.calls +
       weights.maybe * tally.maybe +
       unplaced;
+  }
+
+  /** How little a pass may run late: scarce people belong early in their window, with time for repairs behind. */
+  private strainOf(pass: number): number {
+    const { board, problem } = this;
+    const start = board.start[pass]!;
+    for (const stretch of problem.passes[pass]!.starts) {
+      if (stretch.day !== board.dayOf[pass] || start > stretch.to) continue;
+      const slack = stretch.to - start;
+      return slack < EASE && stretch.from < stretch.to ? 4 * (EASE - slack) : 0;
+    }
+    return 0;
   }
 }

@@ -24,6 +24,8 @@ export interface Wishes {
 export class Placer {
   private readonly attempt: Attempt;
   private readonly chain: Chain;
+  /** The board before a group is tried. */
+  private readonly before: Int32Array;
   /** Ready minutes of a person for a set-up: `ready[setup * people + person]`. */
   private readonly ready: Int32Array;
 
@@ -34,6 +36,7 @@ export class Placer {
   ) {
     this.attempt = new Attempt(problem);
     this.chain = new Chain(problem);
+    this.before = new Int32Array(board.memorySize);
     const people = problem.people.length;
     this.ready = new Int32Array(problem.setups.length * people);
     problem.setups.forEach((setup, i) => setup.ready.forEach(({ person, minutes }) => (this.ready[i * people + person] = minutes)));
@@ -51,7 +54,7 @@ export class Placer {
 
   /** One start for all members: each is asked in turn until nobody wants a later one. */
   private placeTogether(group: readonly number[], pass: number, day: number, wishes: Wishes): boolean {
-    const before = new Int32Array(this.board.memorySize);
+    const { before } = this;
     this.board.save(before);
     const days = group.map((member) => (member === pass ? day : this.dayBeside(member, day, wishes)));
     if (days.includes(-1)) return false;

@@ -42,4 +42,10 @@ export class Solution {
     const day = this.day[pass]!;
     return day < 0 ? 0 : this.problem.days[day]!.dateIndex;
   }
+
+  /** Whether any set-up is made ready the evening before, which ties a date to the one before it. */
+  hasEves(): boolean {
+    for (let day = 0; day < this.eve.length; day++) if (this.eve[day] === 1) return true;
+    return false;
+  }
 }

@@ -1,6 +1,7 @@
 import type { Decoder } from '../decode';
 import { EVER, type Problem } from '../model';
 import type { Solution } from '../solution';
+import { layerRange, put, take } from './order';
 import type { Random } from './random';
 
 /** Longest idle time that a move puts before a pass. */
@@ -62,14 +63,27 @@ export class Moves {
     const from = solution.dateOf(pass);
     const stays = days.length === 1 || this.random.below(2) === 0;
     const day = stays && days.includes(solution.day[pass]!) ? solution.day[pass]! : days[this.random.below(days.length)]!;
-    this.take(solution, pass);
-    this.put(solution, pass, day, this.anywhere(solution, day, 1), 1);
+    take(solution, pass);
+    put(solution, pass, day, this.anywhere(solution, day, 1), 1);
     solution.lead[pass] = 0;
     solution.out[pass] = 0;
     return Math.min(from, solution.dateOf(pass));
   }
 
-  private pick(): number {
+  /** Passes of the same room-day, people or set-up. */
+  company(solution: Solution, pass: number): number[] {
+    const { passes } = this.problem;
+    const { people, setup } = passes[pass]!;
+    const kind = this.random.below(3);
+    const related = (other: number) => {
+      if (kind === 0) return solution.day[other] === solution.day[pass];
+      if (kind === 1) return setup >= 0 && passes[other]!.setup === setup;
+      return passes[other]!.people.some((person) => people.includes(person));
+    };
+    return this.movable.filter((other) => other !== pass && related(other));
+  }
+
+  pick(): number {
     return this.movable[this.random.below(this.movable.length)]!;
   }
 
@@ -117,9 +131,9 @@ export class Moves {
     const choices = passes[first]!.days;
     const target = this.random.below(2) === 0 && choices.includes(day) ? day : choices[this.random.below(choices.length)]!;
     for (let k = 0; k < count; k++) if (!passes[this.block[k]!]!.days.includes(target)) return -1;
-    for (let k = 0; k < count; k++) this.take(solution, this.block[k]!);
+    for (let k = 0; k < count; k++) take(solution, this.block[k]!);
     let at = this.anywhere(solution, target, count);
-    for (let k = 0; k < count; k++) this.put(solution, this.block[k]!, target, at++, count - k);
+    for (let k = 0; k < count; k++) put(solution, this.block[k]!, target, at++, count - k);
     return Math.min(date, solution.dateOf(first));
   }
 
@@ -137,9 +151,9 @@ export class Moves {
     for (const candidate of days) if (this.problem.days[candidate]!.layer === layer) day = candidate;
     if (day < 0) return -1;
     const date = solution.dateOf(pass);
-    this.take(solution, pass);
+    take(solution, pass);
     const beside = solution.order.indexOf(other) + this.random.below(2);
-    this.put(solution, pass, day, beside, 1);
+    put(solution, pass, day, beside, 1);
     return Math.min(date, solution.dateOf(pass));
   }
 
@@ -191,44 +205,20 @@ export class Moves {
     for (const pass of moved) if (!this.problem.passes[pass]!.days.includes(target(pass))) return -1;
     for (const pass of moved) {
       const day = target(pass);
-      this.take(solution, pass);
-      this.put(solution, pass, day, EVER, 1);
+      take(solution, pass);
+      put(solution, pass, day, EVER, 1);
     }
     return Math.min(this.problem.days[one]!.dateIndex, this.problem.days[other]!.dateIndex);
   }
 
-  /** Takes a pass out of the order; its place at the end is free for `put`. */
-  private take(solution: Solution, pass: number): void {
-    const { order } = solution;
-    const at = order.indexOf(pass);
-    order.copyWithin(at, at + 1);
-    order[order.length - 1] = -1;
-  }
-
   /** A chance place in the layer of a room-day, in an order with `free` places free at its end. */
   private anywhere(solution: Solution, day: number, free: number): number {
-    const { low, high } = this.layerRange(solution, day, free);
-    return low + this.random.below(high - low + 1);
-  }
-
-  /** Puts a pass into an order with `free` places free at its end, at a place or as near to it as the layers allow. */
-  private put(solution: Solution, pass: number, day: number, at: number, free: number): void {
-    const { order } = solution;
-    const { low, high } = this.layerRange(solution, day, free);
-    const place = Math.min(Math.max(at, low), high);
-    order.copyWithin(place + 1, place, order.length - 1);
-    order[place] = pass;
-    solution.day[pass] = day;
-  }
-
-  private layerRange(solution: Solution, day: number, free: number): { low: number; high: number } {
-    const { layer } = this.problem.days[day]!;
-    const { order } = solution;
-    const end = order.length - free;
-    let low = 0;
-    while (low < end && solution.layerOf(order[low]!) < layer) low += 1;
-    let high = low;
-    while (high < end && solution.layerOf(order[high]!) === layer) high += 1;
-    return { low, high };
+    const { low, high } = layerRange(solution, day, free);
+    const at = low + this.random.below(high - low + 1);
+    if (this.random.below(8) === 0) return at;
+    // Among passes of other rooms a place is as good as the next one.
+    let slot = at;
+    while (slot < high && solution.day[solution.order[slot]!] !== day) slot += 1;
+    return slot;
   }
 }

@@ -3,32 +3,60 @@ import type { Solution } from '../solution';
 import type { Random } from './random';
 
 /**
- * A first order: work that others wait for and that has little choice comes early, set-ups stay together. Every pass is wanted on its
- * first room-day; what finds no room there is carried on by the decoder.
- * @param shake 0 for the plain order; more leaves more to chance
+ * Passes in the order in which a first timetable takes them up: what others wait for and what has little choice comes early, every pass
+ * after those it depends on.
+ * @param shake hours by which chance may hold a pass back; 0 for the plain order
  */
-export function startSolution(problem: Problem, solution: Solution, random: Random, shake: number): void {
+export function startOrder(problem: Problem, random: Random, shake: number): Int32Array {
   const { passes } = problem;
   const latest = latestStarts(problem);
-  const key = passes.map((pass, i) => {
-    const musts = pass.priority === 'must' ? 0 : 1;
-    return { i, musts, layer: layerOf(problem, i), latest: latest[i]! + random.below(shake * 60 + 1), setup: pass.setup };
-  });
-  key.sort((a, b) => a.layer - b.layer || a.musts - b.musts || a.latest - b.latest || a.setup - b.setup || a.i - b.i);
+  const choice = choices(problem);
+  const keys = passes.map((pass, i) => ({
+    i,
+    musts: pass.priority === 'must' ? 0 : 1,
+    urgency: choice[i]! + random.below(shake * 60 + 1),
+    latest: latest[i]!,
+  }));
+  keys.sort((a, b) => a.musts - b.musts || a.urgency - b.urgency || a.latest - b.latest || a.i - b.i);
+  const order = new Int32Array(passes.length);
   const done = new Uint8Array(passes.length);
   let count = 0;
-  const visit = (i: number, layer: number): void => {
+  const visit = (i: number): void => {
     if (done[i] === 1) return;
     done[i] = 1;
-    for (const { pass } of passes[i]!.after) if (layerOf(problem, pass) === layer) visit(pass, layer);
-    solution.order[count++] = i;
+    for (const { pass } of passes[i]!.after) visit(pass);
+    order[count++] = i;
   };
-  for (const { i, layer } of key) visit(i, layer);
+  for (const { i } of keys) visit(i);
+  return order;
+}
+
+/** The solution that wants every pass on its first room-day, in an order given; the decoder carries on what finds no room there. */
+export function plainSolution(problem: Problem, solution: Solution, order: Int32Array): void {
+  const { passes } = problem;
   passes.forEach((pass, i) => (solution.day[i] = pass.days[0] ?? -1));
+  solution.order.set([...order].sort((a, b) => layerOf(problem, a) - layerOf(problem, b)));
   solution.lead.fill(0);
   solution.out.fill(0);
   solution.begin.fill(0);
   solution.eve.fill(0);
+}
+
+/** Minutes in which each pass, or a pass that waits for it, may start: the scarcer, the earlier it is taken up. */
+function choices(problem: Problem): number[] {
+  const { passes } = problem;
+  const minutes = passes.map((pass) => pass.starts.reduce((sum, { from, to }) => sum + to - from + problem.rules.step, 0));
+  for (let round = 0, moved = true; moved && round < passes.length; round++) {
+    moved = false;
+    passes.forEach((pass, i) => {
+      for (const { pass: before } of pass.after) {
+        if (minutes[before]! <= minutes[i]!) continue;
+        minutes[before] = minutes[i]!;
+        moved = true;
+      }
+    });
+  }
+  return minutes;
 }
 
 function layerOf(problem: Problem, pass: number): number {
