@@ -80,8 +80,13 @@ async function activeElement(page: Page): Promise<ElementHandle<Element> | null>
 
 /** An element as a screen reader tells it. */
 async function toldAs(page: Page, element: ElementHandle<Element>): Promise<Focus> {
-  const node = await page.accessibility.snapshot({ root: element, interestingOnly: false });
-  return { role: node?.role ?? '', name: node?.name ?? '' };
+  const session = await page.createCDPSession();
+  const { nodes } = await session.send('Accessibility.getPartialAXTree', {
+    backendNodeId: await element.backendNodeId(),
+    fetchRelatives: false,
+  });
+  await session.detach();
+  return { role: String(nodes[0]?.role?.value ?? ''), name: String(nodes[0]?.name?.value ?? '') };
 }
 
 /** The control that has the focus, as a screen reader tells it; null where none has it. */
@@ -114,7 +119,7 @@ async function paintedAt(page: Page, element: ElementHandle<Element>): Promise<s
   });
   if (box.width === 0 || box.height === 0) return '';
   const clip = { x: Math.max(0, box.x - 6), y: Math.max(0, box.y - 6), width: box.width + 12, height: box.height + 12 };
-  return page.screenshot({ clip, encoding: 'base64', captureBeyondViewport: true });
+  return page.screenshot({ clip, encoding: 'base64', captureBeyondViewport: false, optimizeForSpeed: true }); // the focus scrolled it into view
 }
 
 /** Goes once through the page with Tab and looks at every control on the way. */
