@@ -79,7 +79,15 @@ export const newProductionRequest = z.union([
 export const importResponse = z.object({ id: z.uuid(), warnings: z.array(fault) });
 
 /** What a member's device holds of a production. With `?since=` only the rows that are newer. */
-export const snapshot = z.object({ id: z.uuid(), role, revision: z.int(), version: z.int().nullable(), rows: z.array(row) });
+export const snapshot = z.object({
+  id: z.uuid(),
+  role,
+  /** Which of the production's people the member is, if any. */
+  person: z.string().nullable(),
+  revision: z.int(),
+  version: z.int().nullable(),
+  rows: z.array(row),
+});
 export type Snapshot = z.infer<typeof snapshot>;
 
 export const historyEntry = z.object({

@@ -6,6 +6,7 @@ import type { Role } from '../../shared/contracts/roles';
 import type { ProductionFile } from '../../shared/contracts/resources';
 import { fileOf } from '../../shared/domain/changes';
 import type { Edit } from '../../shared/domain/edits';
+import type { Reader } from '../../shared/domain/policy';
 import { postChanges } from '../api/changes';
 import { readProduction } from '../api/productions';
 import { newId } from './ids';
@@ -55,6 +56,9 @@ function wordsFor(saving: Saving, unsaved: number, refused: number): string {
 export const useProduction = defineStore('production', () => {
   const id = ref<string | null>(null);
   const role = ref<Role>('guest');
+  /** Which of the people whoever is here is, if any. */
+  const person = ref<string | null>(null);
+  const reader = computed<Reader>(() => ({ role: role.value, person: person.value }));
   const version = ref<number | null>(null);
   const revision = ref(0);
   const stored = shallowRef<Rows>(new Map());
@@ -107,6 +111,7 @@ export const useProduction = defineStore('production', () => {
     if (id.value !== production) return;
     stored.value = new Map();
     role.value = answer.role;
+    person.value = answer.person;
     version.value = answer.version;
     take(answer.rows, answer.revision);
   }
@@ -119,6 +124,7 @@ export const useProduction = defineStore('production', () => {
     revision.value = 0;
     version.value = null;
     role.value = 'guest';
+    person.value = null;
   }
 
   /** Brings what was written since a revision, by others too. */
@@ -128,6 +134,7 @@ export const useProduction = defineStore('production', () => {
     const answer = await readProduction(production, since);
     if (id.value !== production) return;
     role.value = answer.role;
+    person.value = answer.person;
     version.value = answer.version;
     take(answer.rows, answer.revision);
   }
@@ -162,6 +169,7 @@ export const useProduction = defineStore('production', () => {
   return {
     id,
     role,
+    reader,
     version,
     revision,
     rows,

@@ -104,7 +104,7 @@ export async function listProductions({ db }: Context, actor: Actor): Promise<Pr
 export async function snapshotOf(context: Context, member: Membership, since: number | undefined): Promise<Snapshot> {
   const known = await context.db.productions.findByPk(member.productionId, { attributes: ['revision'] });
   const newest = await context.db.versions.max<number | null, VersionModel>('number', { where: { productionId: member.productionId } });
-  const head = { id: member.productionId, role: member.role, version: newest ?? null };
+  const head = { id: member.productionId, role: member.role, person: member.person, version: newest ?? null };
   if (known && since !== undefined && since >= known.revision) return { ...head, revision: known.revision, rows: [] };
   const { revision, rows } = await readProduction(context, member.productionId);
   const fresh = rows.all().filter((row) => since === undefined || row.revision > since);
