@@ -6,6 +6,7 @@ import * as roomsPeopleGear from './003-rooms-people-gear';
 import * as songsPasses from './004-songs-passes';
 import * as plans from './005-plans';
 import * as preparation from './006-preparation';
+import * as orderOfHistory from './007-order-of-history';
 import type { Step } from './support';
 
 /** Every step in order. A name is never changed and a released step never edited: the database remembers what it has seen. */
@@ -16,6 +17,7 @@ const steps: ({ name: string } & Step)[] = [
   { name: '004-songs-passes', ...songsPasses },
   { name: '005-plans', ...plans },
   { name: '006-preparation', ...preparation },
+  { name: '007-order-of-history', ...orderOfHistory },
 ];
 
 export function migrator(sequelize: Sequelize) {

@@ -42,6 +42,8 @@ export interface HistoryModel extends Model<InferAttributes<HistoryModel>, Infer
   productionId: string;
   changeId: string;
   revision: number;
+  /** Place within the batch. */
+  ordinal: number;
   base: number | null;
   userId: string;
   byName: string;
@@ -108,6 +110,7 @@ export function productionModels(sequelize: Sequelize) {
         productionId: uuid,
         changeId: uuid,
         revision: whole,
+        ordinal: whole,
         base: maybeWhole,
         userId: uuid,
         byName: words,

@@ -19,9 +19,7 @@ export async function readHistory(
     },
     order: [
       ['revision', 'DESC'],
-      ['resource', 'ASC'],
-      ['key', 'ASC'],
-      ['id', 'ASC'],
+      ['ordinal', 'DESC'],
     ],
     limit: MOST,
   });

@@ -121,10 +121,11 @@ async function writeHistory(
   at: { revision: number; now: Date; transaction: Transaction },
 ): Promise<void> {
   await db.history.bulkCreate(
-    effects.map(({ change, before, after }) => ({
+    effects.map(({ change, before, after }, ordinal) => ({
       productionId: writer.productionId,
       changeId: change.id,
       revision: at.revision,
+      ordinal,
       base: change.base ?? null,
       userId: writer.userId,
       byName: writer.name,
