@@ -110,6 +110,13 @@ describe('a batch', () => {
     expect(new Set(rows.map((row) => row.revision))).toEqual(new Set([2]));
   });
 
+  it('that makes and removes something in vain is taken, unless it never could have stood', async () => {
+    await applied([aChange('people', 'ida', 'create', {}), aChange('people', 'ida', 'remove')]);
+    expect((await rowOf('people', 'ida'))?.removed).toBe(true);
+    await refused(422, [aChange('parts', 'ghost/lead', 'create', {}), aChange('parts', 'ghost/lead', 'remove')]);
+    await refused(422, [aChange('setups', 'kit', 'create', { room: 'ghost' }), aChange('setups', 'kit', 'remove')]);
+  });
+
   it('sent again is applied once and answered with the rows as they are', async () => {
     const changes = [aChange('people', 'ida', 'create', { name: 'Ida' }), aChange('songs', 'first', 'update', { tempo: 90 })];
     const first = await applied(changes);

@@ -7,17 +7,18 @@ import { wrongFields } from './fields';
 import { namedBy } from './mapping';
 import type { KnownRow, Rows } from './rows';
 
-/** References of the touched rows that name nothing, or something removed. */
+/** References of the touched rows that name nothing; what stands may not name what was removed either. */
 function danglingReferences(rows: Rows, touched: Iterable<KnownRow>): Fault[] {
   return [...touched].flatMap((row) =>
-    row.removed
-      ? []
-      : namedBy(row.resource, row.key, row.fields)
-          .filter(({ to, key }) => rows.get(to, key)?.removed !== false)
-          .map(({ to, key, path }) => ({
-            path: [row.resource, row.key, ...path].join('.'),
-            expected: `the id of a ${rowWords[to]} that is there; "${idOfKey(to, key)}" is none`,
-          })),
+    namedBy(row.resource, row.key, row.fields)
+      .filter(({ to, key }) => {
+        const named = rows.get(to, key);
+        return !named || (named.removed && !row.removed);
+      })
+      .map(({ to, key, path }) => ({
+        path: [row.resource, row.key, ...path].join('.'),
+        expected: `the id of a ${rowWords[to]} that is there; "${idOfKey(to, key)}" is none`,
+      })),
   );
 }
 
