@@ -2,7 +2,7 @@ import { mkdir, writeFile } from 'node:fs/promises';
 import path from 'node:path';
 import type { MadePlan, PlanOutcome } from '../../shared/contracts/plan';
 import type { ProductionFile } from '../../shared/contracts/resources';
-import { callTexts } from '../../shared/domain/calendar/call-text';
+import { calendarName, callTexts } from '../../shared/domain/calendar/call-text';
 import { callSheet, calledPeople } from '../../shared/domain/sheets/call-sheet';
 import { documentName } from '../../shared/domain/sheets/file-names';
 import { runSheet, runSheetDates } from '../../shared/domain/sheets/run-sheet';
@@ -70,7 +70,7 @@ function* sheetsOf(
 function draftCalendar(file: ProductionFile, plan: MadePlan, person: string, now: Date): string {
   const { code, title, timezone } = file.production;
   return writeCalendar({
-    name: title,
+    name: calendarName(file, person),
     timezone,
     events: callTexts(file, plan, person).map(({ call, text }) => ({
       uid: uidOf(code, title, person, call.date),

@@ -1,5 +1,6 @@
 import { createHash } from 'node:crypto';
 import { Op } from 'sequelize';
+import { calendarName } from '../../../shared/domain/calendar/call-text';
 import { eventsOf } from '../../calendar/feed';
 import { writeCalendar } from '../../calendar/write';
 import type { Context } from '../../context';
@@ -31,8 +32,9 @@ export async function readFeed(context: Context, token: string | undefined, sour
   const published = await publishedCallsOf(context, link.productionId, link.personId);
   if (!published || published.outcome.cost === null) return emptyFeed(context, link, source);
   const { file, outcome, person, calls, publishedAt } = published;
-  const { title, timezone } = file.production;
-  return feedOf(writeCalendar({ name: title, timezone, source, events: eventsOf(file, outcome, person, calls) }), publishedAt);
+  const { timezone } = file.production;
+  const name = calendarName(file, person);
+  return feedOf(writeCalendar({ name, timezone, source, events: eventsOf(file, outcome, person, calls) }), publishedAt);
 }
 
 /** Before anything is published the calendar is there, and empty. */

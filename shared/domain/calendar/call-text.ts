@@ -3,6 +3,7 @@ import type { ProductionFile } from '../../contracts/resources';
 import type { PersonId } from '../flavours';
 import { callFacts } from '../sheets/call-facts';
 import { callDays } from '../sheets/call-sheet';
+import { namesOf } from '../sheets/names';
 import type { CallDay, CallFact } from '../sheets/sheet';
 
 /** The words of a call in a calendar. They change only when the call or what it is about changes, never with the version alone. */
@@ -31,6 +32,11 @@ function describe(day: CallDay, facts: readonly CallFact[]): string {
   ]
     .join('\n')
     .trim();
+}
+
+/** What a calendar is called in somebody's list of calendars. */
+export function calendarName(file: ProductionFile, person: PersonId): string {
+  return `${file.production.title}: ${namesOf(file).short(person)}`;
 }
 
 export function summaryOf(file: ProductionFile): string {

@@ -169,7 +169,8 @@ function plainTask(item: PlanItem, day: RoomDay, all: readonly RoomDay[], names:
 
 /** The usual caution where building and moving can hurt (common practice, no source; local rules and licensed people come first). */
 function cautionFor(item: PlanItem): string {
-  return item.kind === 'rig' || item.kind === 'changeover' ? 'two to lift, walkways clear, mute before patching' : '';
+  if (item.kind === 'rig') return 'two to lift, walkways clear, mute before patching';
+  return item.kind === 'changeover' ? 'lift by two, mute to patch' : '';
 }
 
 function roomFacts(day: RoomDay, names: Names): string[] {
