@@ -26,10 +26,12 @@ function checkDay(reading: Reading, day: RoomDay, say: Say): void {
   if (passes.length === 0) return;
   const { wrap, listen, reserve, step } = reading.rules;
   const where = `${day.room} on ${day.date}`;
-  const last = items.reduce((latest, item) => (item.to > latest.to ? item : latest));
-  if (wrap > 0 && (last.kind !== 'wrap' || lengthOf(last) < wrap)) say('wrap', `${where} does not end with a wrap of ${wrap} min.`);
+  // The last to begin and the last to end: they differ only where items overlap.
+  const ending = [items.at(-1)!, items.reduce((latest, item) => (item.to > latest.to ? item : latest))];
+  if (wrap > 0 && ending.some((item) => item.kind !== 'wrap' || lengthOf(item) < wrap))
+    say('wrap', `${where} does not end with a wrap of ${wrap} min.`);
   const first = items[0]!;
-  const captured = [...reading.placed.values()].some((pass) => pass.roomDay !== undefined && pass.roomDay.date < day.date);
+  const captured = [...reading.placed.values()].some((pass) => (pass.roomDay?.date ?? pass.start.slice(0, 10)) < day.date);
   if (listen > 0 && captured && (first.kind !== 'listen' || lengthOf(first) < listen))
     say('listen', `${where} does not begin with a listen of ${listen} min, although there is an earlier capture.`);
   const need = Math.floor((reserve * sumOf(passes)) / step) * step;
