@@ -3,7 +3,7 @@ import type { ProductionFile } from '../contracts/resources';
 import type { Minute, Minutes, PassId, WallDate } from '../domain/flavours';
 import { passInWords } from '../domain/passes';
 import { namesOf } from '../domain/sheets/names';
-import { clock, dayWords, length } from '../time/words';
+import { dayWords, length } from '../time/words';
 import { zoneClock, type ZoneClock } from '../time/wall';
 import { effectivePasses } from './derive';
 
@@ -89,12 +89,10 @@ function thinWarning(file: ProductionFile, plan: MadePlan, zone: ZoneClock): Pla
     const slack = minuteOf(own.to, zone) - release;
     return slack < THIN ? [{ call, slack }] : [];
   });
-  const [first, ...others] = thin.sort((a, b) => a.slack - b.slack);
+  const [first] = thin.sort((a, b) => a.slack - b.slack);
   if (!first) return [];
   const day = dayWords(first.call.date).slice(0, WEEKDAY);
-  const until = first.slack === 0 ? 'nothing to spare' : length(first.slack);
-  const more = others.length > 0 ? `, and ${others.length} more` : '';
-  return [{ word: 'reserve thin', says: `${day}: ${until} before ${names.short(first.call.person)} leaves${more}` }];
+  return [{ word: 'reserve thin', says: `${day}: ${length(first.slack)} before ${names.short(first.call.person)} leaves` }];
 }
 
 /** Whether any room is still open after that time, so that somebody leaves while work goes on. */
@@ -112,12 +110,12 @@ function overrunWarning(file: ProductionFile, plan: MadePlan, zone: ZoneClock): 
     const opens = Math.min(...open.map(({ from }) => minuteOf(from, zone)));
     const closes = Math.max(...open.map(({ to }) => minuteOf(to, zone)));
     const over = endOf(day.date, day.p90, opens, zone) - closes;
-    return over > 0 ? [{ day, room, closes: clock(zone.wallOf(closes)), over }] : [];
+    return over > 0 ? [{ day, over }] : [];
   });
   const [first] = late.sort((a, b) => b.over - a.over);
   if (!first) return [];
   const day = dayWords(first.day.date).slice(0, WEEKDAY);
-  const says = `${day}: 1 in 10 past ${first.day.p90}, ${first.room.name ?? first.room.id} closes ${first.closes}`;
+  const says = `${day}: 1 in 10 ends past ${first.day.p90}`;
   return [{ word: 'may run over', says }];
 }
 

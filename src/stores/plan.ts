@@ -1,3 +1,4 @@
+import { until } from '@vueuse/core';
 import { defineStore } from 'pinia';
 import { computed, ref, shallowRef } from 'vue';
 import type { Draft, PublishedPlan, Version } from '../../shared/contracts/api';
@@ -39,6 +40,9 @@ export interface Solving {
 export const DEFAULT_SECONDS = 10;
 /** After a pin or a move the rest is planned around it in a moment. */
 export const QUICK_SECONDS = 3;
+
+/** How long the server is given to answer what was sent before, in ms. */
+const ANSWER = 15_000;
 
 /** Fields that no plan depends on; a change of them alone does not make it old. */
 const BESIDE: ReadonlySet<string> = new Set([
@@ -210,7 +214,7 @@ export const usePlan = defineStore('plan', () => {
     return taken;
   }
 
-  /** Keeps the plan on the server as a draft, so that another device finds it; true when it is there. */
+  /** Keeps the plan on the server as a draft, so that another device finds it; true when it is there. An old plan is not kept. */
   async function keep(): Promise<boolean> {
     const plan = shown.value;
     const id = production.id;
@@ -218,9 +222,11 @@ export const usePlan = defineStore('plan', () => {
     if (plan.draft) return true;
     keeping.value = true;
     try {
-      await production.flush();
+      // What is on its way comes first: a draft names the revision it was made from.
+      await until(() => production.saving).not.toBe('saving', { timeout: ANSWER });
+      if (plan.madeFrom !== fingerprint.value) return false;
       const { outcome, seed, iterations } = plan;
-      const inputRevision = plan.madeFrom === fingerprint.value ? production.revision : plan.inputRevision;
+      const inputRevision = production.revision;
       const draft = await keepDraft(id, { inputRevision, seed, iterations, outcome });
       if (shown.value === plan) shown.value = { ...plan, inputRevision, draft: draft.id };
       return true;
@@ -235,8 +241,11 @@ export const usePlan = defineStore('plan', () => {
   /** Gives the plan a number; true when it is published. */
   async function publish(note: string): Promise<boolean> {
     const id = production.id;
-    if (!id || !(await keep()) || !shown.value?.draft) return false;
     trouble.value = null;
+    if (!id || !(await keep()) || !shown.value?.draft) {
+      trouble.value ??= 'This plan is older than the songs. Plan again, then publish.';
+      return false;
+    }
     try {
       const made = await versionsApi.publish(id, { plan: shown.value.draft, ...(note.trim() === '' ? {} : { note: note.trim() }) });
       versions.value = [...versions.value, made];

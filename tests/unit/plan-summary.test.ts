@@ -48,7 +48,7 @@ describe('a plan in a few figures', () => {
     ];
     expect(planSummary(sampleFile(), plan).warnings).toContainEqual({
       word: 'may run over',
-      says: 'Tue: 1 in 10 past 20:40, Room A closes 20:00',
+      says: 'Tue: 1 in 10 ends past 20:40',
     });
   });
 
@@ -57,7 +57,7 @@ describe('a plan in a few figures', () => {
     plan.odds.days = [{ room: 'a', date: '2027-03-09', p50: '19:00', p90: '00:20' }];
     expect(planSummary(sampleFile(), plan).warnings).toContainEqual({
       word: 'may run over',
-      says: 'Tue: 1 in 10 past 00:20, Room A closes 20:00',
+      says: 'Tue: 1 in 10 ends past 00:20',
     });
   });
 });

@@ -1,4 +1,5 @@
 import type { ProductionFile } from '../../../shared/contracts/resources';
+import type { PassId } from '../../../shared/domain/flavours';
 import { passInWords } from '../../../shared/domain/passes';
 import { namesOf } from '../../../shared/domain/sheets/names';
 
@@ -6,8 +7,12 @@ import { namesOf } from '../../../shared/domain/sheets/names';
 export interface Place {
   words: string;
   section: 'songs' | 'people' | 'rooms';
-  /** The pass whose pin it is. */
-  pin?: string;
+  /** What can be done about it on the spot. */
+  act?: Mending;
+}
+export interface Mending {
+  does: 'unpin' | 'leaveOut' | 'takeIn';
+  pass: PassId;
 }
 
 /** The places of facts such as `people.lys.windows`, each named once. */
@@ -41,7 +46,10 @@ function placeOf(fact: string, file: ProductionFile): Place | null {
     case 'passes': {
       const pass = names.pass(id);
       const words = pass ? passInWords(file, pass) : id;
-      return field === 'pin' ? { words: `Unpin ${words}`, section: 'songs', pin: id } : { words, section: 'songs' };
+      if (field === 'pin') return { words: `Unpin ${words}`, section: 'songs', act: { does: 'unpin', pass: id } };
+      if (field !== undefined) return { words, section: 'songs' };
+      if (pass?.leftOut) return { words: `Take ${words} in again`, section: 'songs', act: { does: 'takeIn', pass: id } };
+      return { words: `Leave ${words} out`, section: 'songs', act: { does: 'leaveOut', pass: id } };
     }
     default:
       return null;

@@ -42,7 +42,7 @@ export function boundInWords(outcome: { cost: { total: number }; bound: number }
   const { bound } = outcome;
   if (bound >= total) return 'proven best';
   const share = total > 0 ? Math.ceil(((total - bound) / total) * 100) : 100;
-  return share <= 60 ? `at most ${share} % better is possible` : 'not proven best; a longer search may find better';
+  return share <= 60 ? `at most ${share} % better is possible` : 'not proven best';
 }
 
 /** The best plan of a search so far, in words. */

@@ -7,6 +7,7 @@ import type { PlanDay } from '../../../shared/planner/day';
 import { type Direction, dropOf, findPass, type Move, moveOf, type NoMove, pinInWords } from '../../../shared/planner/moves';
 import { zoneClock } from '../../../shared/time/wall';
 import type { Edit } from '../../../shared/domain/edits';
+import type { Mending } from './facts';
 import type { Landing } from './usePassDrag';
 
 interface Desk {
@@ -32,7 +33,7 @@ export interface LastAction {
 export function usePlanActions({ file, days, mayChange, apply, applyInPlace, replan, say }: Desk): {
   last: Ref<LastAction | null>;
   togglePin: (pass: PassId) => void;
-  unpin: (pass: PassId) => void;
+  mend: (mending: Mending) => void;
   toggleLeftOut: (pass: PassId) => void;
   move: (pass: PassId, direction: Direction) => void;
   drop: (landing: Landing) => void;
@@ -76,6 +77,12 @@ export function usePlanActions({ file, days, mayChange, apply, applyInPlace, rep
     set(id, { leftOut: out ? null : true }, out ? 'Taken in again.' : 'Left out.', true);
   }
 
+  /** What the page offers where facts clash. */
+  function mend({ does, pass }: Mending): void {
+    if (does === 'unpin') unpin(pass);
+    else toggleLeftOut(pass);
+  }
+
   function move(id: PassId, direction: Direction): void {
     settle(id, moveOf(file.value, days.value, id, direction));
   }
@@ -102,5 +109,5 @@ export function usePlanActions({ file, days, mayChange, apply, applyInPlace, rep
     replan();
   }
 
-  return { last, togglePin, unpin, toggleLeftOut, move, drop, takeBack };
+  return { last, togglePin, mend, toggleLeftOut, move, drop, takeBack };
 }
