@@ -1,5 +1,5 @@
 import type { z } from 'zod';
-import type { Draft, draftRequest } from '../../../shared/contracts/api';
+import type { Draft, draftRequest, Fault } from '../../../shared/contracts/api';
 import type { PlanOutcome } from '../../../shared/contracts/plan';
 import type { ProductionFile } from '../../../shared/contracts/resources';
 import { fileOf } from '../../../shared/domain/changes';
@@ -15,38 +15,28 @@ import { lockProduction } from '../changes/service';
 
 const MOST = 30;
 
-/** Refuses a plan that breaks a rule of its production; every rule that it breaks is told. */
-export function demandValid(file: ProductionFile, outcome: PlanOutcome, otherwise: (says: string) => Refusal): void {
-  if (outcome.status !== 'optimal' && outcome.status !== 'feasible') return;
+/** Every rule of its production that a plan breaks, in words; none where it says that no plan can be made. */
+export function brokenRules(file: ProductionFile, outcome: PlanOutcome): Fault[] {
+  if (outcome.cost === null) return [];
   const { violations } = checkPlan({ ...file, passes: effectivePasses(file) }, outcome);
-  const [first] = violations;
-  if (!first) return;
-  const refusal = otherwise(first.says);
-  throw new Refusal(
-    refusal.code,
-    refusal.detail,
-    violations.map(({ rule, says }) => ({ path: `plan.${rule}`, expected: says })),
-  );
+  return violations.map(({ rule, says }) => ({ path: `plan.${rule}`, expected: says }));
 }
 
 /** Keeps a plan as a draft: made from the production as it stands, and checked against it. */
-export async function storeDraft(
-  { db, now, ...context }: Context,
-  actor: Actor,
-  member: Membership,
-  asked: z.infer<typeof draftRequest>,
-): Promise<Draft> {
+export async function storeDraft(context: Context, actor: Actor, member: Membership, asked: z.infer<typeof draftRequest>): Promise<Draft> {
+  const { db } = context;
   const { productionId } = member;
   const { outcome } = asked;
   return db.sequelize.transaction(async (transaction) => {
-    const { revision } = await lockProduction({ db, now, ...context }, productionId, transaction);
+    const { revision } = await lockProduction(context, productionId, transaction);
     if (asked.inputRevision !== revision)
       throw new Refusal(
         'conflict',
         'The production has changed since this plan was begun. Solve again: the plan is then made from what is there now.',
       );
     const file = fileOf((await loadRows(db, productionId, transaction)).all());
-    demandValid(file, outcome, (says) => new Refusal('wrong-fields', `This plan breaks a rule: ${says} Solve again.`));
+    const broken = brokenRules(file, outcome);
+    if (broken[0]) throw new Refusal('wrong-fields', `This plan breaks a rule: ${broken[0].expected} Solve again.`, broken);
     const plan = await db.plans.create(
       {
         productionId,
@@ -59,7 +49,7 @@ export async function storeDraft(
         outcome,
         file,
         createdBy: actor.userId,
-        createdAt: now(),
+        createdAt: context.now(),
       },
       { transaction },
     );

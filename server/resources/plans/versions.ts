@@ -12,7 +12,7 @@ import type { PlanModel, VersionModel } from '../../models/plans';
 import { loadRows } from '../changes/rows';
 import { lockProduction } from '../changes/service';
 import { nextCalls } from './calls';
-import { demandValid } from './drafts';
+import { brokenRules } from './drafts';
 
 async function demandPlan({ db }: Context, productionId: string, id: string, transaction: Transaction): Promise<PlanModel> {
   const plan = await db.plans.findOne({ where: { productionId, id }, transaction });
@@ -37,15 +37,12 @@ export async function publish(
     const plan = await demandPlan(context, productionId, asked.plan, transaction);
     const rows = await loadRows(db, productionId, transaction);
     const file = fileOf(rows.all());
-    if (plan.inputRevision !== revision)
-      demandValid(
-        file,
-        plan.outcome,
-        (says) =>
-          new Refusal(
-            'conflict',
-            `The production has changed since this plan was made, and it no longer holds: ${says} Solve again, then publish.`,
-          ),
+    const broken = plan.inputRevision === revision ? [] : brokenRules(file, plan.outcome);
+    if (broken[0])
+      throw new Refusal(
+        'conflict',
+        `The production has changed since this plan was made, and it no longer holds: ${broken[0].expected} Solve again, then publish.`,
+        broken,
       );
     const last = await db.versions.findOne({ where: { productionId }, order: [['number', 'DESC']], transaction });
     const before = last ? await db.calls.findAll({ where: { versionId: last.id }, transaction }) : [];
