@@ -13,7 +13,7 @@ import { rowKey, rowsAfter } from '../../src/stores/optimism';
 import { sampleFile, samplePlan } from '../factories/plan-sample';
 
 /** A desk over rows as the page keeps them, with edits applied as the store does. */
-function desk(start: ProductionFile = sampleFile()) {
+function desk(start: ProductionFile = sampleFile(), failed = false) {
   const rows = ref(
     new Map(rowsOf(start).map((row, position) => [rowKey(row.resource, row.key), { ...row, position, revision: 1, removed: false }])),
   );
@@ -30,6 +30,7 @@ function desk(start: ProductionFile = sampleFile()) {
     mayChange: computed(() => true),
     apply,
     applyInPlace: apply,
+    failed: () => failed,
     replan: () => (planned.value += 1),
     say: (sentence) => said.push(sentence),
   });
@@ -38,7 +39,7 @@ function desk(start: ProductionFile = sampleFile()) {
 }
 
 describe('pins and moves on the plan', () => {
-  it('pins where it stands without planning again, and unpins with a new plan around it', () => {
+  it('pins and unpins where it stands without planning again, for the plan holds either way', () => {
     const { togglePin, pass, said, planned } = desk();
     togglePin('s2-basics');
     expect(pass('s2-basics')!.pin).toEqual({ at: '2027-03-08T14:30' });
@@ -46,6 +47,13 @@ describe('pins and moves on the plan', () => {
     expect(planned.value).toBe(0);
     togglePin('s2-basics');
     expect(pass('s2-basics')!.pin).toBeUndefined();
+    expect(planned.value).toBe(0);
+  });
+
+  it('unpins with a new plan where none holds', () => {
+    const { mend, pass, planned } = desk(sampleFile(), true);
+    mend({ does: 'unpin', pass: 's1-basics' });
+    expect(pass('s1-basics')!.pin).toBeUndefined();
     expect(planned.value).toBe(1);
   });
 

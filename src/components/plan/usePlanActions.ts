@@ -18,6 +18,8 @@ interface Desk {
   apply: (edits: Edit[]) => boolean;
   /** Applies edits that the plan as it stands already keeps. */
   applyInPlace: (edits: Edit[]) => boolean;
+  /** Whether no plan holds at the moment, so that any change wants a new one. */
+  failed: () => boolean;
   /** Plans again around what has changed. */
   replan: () => void;
   say: (sentence: string) => void;
@@ -30,7 +32,7 @@ export interface LastAction {
 }
 
 /** Pins, moves and leaving out: each is a change of the production, said aloud, and can be taken back. */
-export function usePlanActions({ file, days, mayChange, apply, applyInPlace, replan, say }: Desk): {
+export function usePlanActions({ file, days, mayChange, apply, applyInPlace, failed, replan, say }: Desk): {
   last: Ref<LastAction | null>;
   togglePin: (pass: PassId) => void;
   mend: (mending: Mending) => void;
@@ -54,12 +56,13 @@ export function usePlanActions({ file, days, mayChange, apply, applyInPlace, rep
     if (thenPlan) replan();
   }
 
-  function setPin(id: PassId, pin: Pin | null, says: string): void {
+  function setPin(id: PassId, pin: Pin, says: string): void {
     set(id, { pin }, says, true);
   }
 
+  /** A plan that keeps a pin holds without it too. */
   function unpin(id: PassId): void {
-    setPin(id, null, 'Unpinned.');
+    set(id, { pin: null }, 'Unpinned.', failed());
   }
 
   function togglePin(id: PassId): void {
