@@ -26,8 +26,8 @@ async function usablePlan(browser: Browser, address: string, { client, id }: Pub
   await signIn(page, address, client.cookie);
   const took = await timed(async () => {
     await page.goto(`${address}/p/${id}/plan`);
-    await page.waitForSelector('svg [data-pass]');
-    await page.locator('::-p-aria([name="Solve again"][role="button"])').wait();
+    await page.waitForSelector('[data-pass]');
+    await page.locator('button::-p-text(Plan again)').wait();
   });
   await page.browserContext().close();
   return took;
