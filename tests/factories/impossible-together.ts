@@ -163,6 +163,12 @@ export const impossibleTogether: Impossible[] = [
     /Room A would need 12 h 30 of work on Mon 8 March and has 10 h at most/,
   ],
   [
+    'four passes of more than half a day on three days',
+    () => emptyProduction(['w', 'x', 'y', 'z'].map((id): Pass => aPass(id, { minutes: 350 }))),
+    ['passes.w', 'passes.x', 'passes.y', 'passes.z', 'rooms.a.open'],
+    /The passes in Room A are too long to be shared out from Mon 8 March to Wed 10 March/,
+  ],
+  [
     'a room full with a changeover',
     () =>
       edited(

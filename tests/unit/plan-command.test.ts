@@ -83,8 +83,8 @@ describe('the plan command', { timeout: 60_000 }, () => {
   });
 
   it('exits 4 where it finds no plan and proves nothing', async () => {
-    // Four passes of more than half a day each do not fit into three days, though their minutes do.
-    const file = emptyProduction(['w', 'x', 'y', 'z'].map((id) => aPass(id, { minutes: 350 })));
+    // However these are shared out over three days of 600 minutes, one is left over, though their sum would fit.
+    const file = emptyProduction([400, 400, 250, 250, 250, 200].map((minutes, i) => aPass(`x${i}`, { minutes })));
     const { status, out } = await call(written('unsolved.yaml', writeProductionFile(file)), '--iterations', '20');
     expect(status).toBe(4);
     expect(JSON.parse(out)).toMatchObject({ status: 'unsolved', cost: null, bound: null, items: [], calls: [], odds: null, conflicts: [] });

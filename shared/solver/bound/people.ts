@@ -1,8 +1,9 @@
 import type { Minutes } from '../../domain/flavours';
 import { merged, within, type PassModel, type PersonModel, type Problem, type Span } from '../model';
+import { leastBins } from '../packing';
 import { mostOfDay } from '../pauses';
 import { common, total } from '../spans';
-import { leastCount, leastPlaces } from './stab';
+import { leastPlaces } from './stab';
 
 /**
  * The least number of dates on which a person is called. Dates of events that name them are certain; beyond those, at least as many as
@@ -14,15 +15,14 @@ export function leastCalls(problem: Problem, person: number, passes: readonly Pa
   const datesOf = (pass: PassModel) => [...new Set(pass.days.map((day) => problem.days[day]!.dateIndex))];
   const apart = leastPlaces(passes.map(datesOf), certain);
   const dates = [...new Set(passes.flatMap(datesOf))];
-  const further = dates.filter((date) => !certain.has(date));
-  const fill = (wanted: number, capacityOf: (date: number) => number) => {
-    const already = dates.filter((date) => certain.has(date)).reduce((sum, date) => sum + capacityOf(date), 0);
-    const count = leastCount(wanted - already, further.map(capacityOf));
-    return count === Infinity ? 0 : count;
+  /** Dates beyond the certain ones: all of those that the passes could use are taken to be used. */
+  const fill = (sizes: readonly number[], capacityOf: (date: number) => number) => {
+    const least = leastBins(sizes, dates.map(capacityOf));
+    return least === Infinity ? 0 : Math.max(0, least - dates.filter((date) => certain.has(date)).length);
   };
-  const minutes = passes.reduce((sum, pass) => sum + pass.minutes, 0);
+  const minutes = passes.map((pass) => pass.minutes);
   const byMinutes = fill(minutes, (date) => mostOnDate(problem, model, passes, date));
-  const sung = passes.reduce((sum, pass) => sum + (pass.voice.find((voice) => voice.person === person)?.minutes ?? 0), 0);
+  const sung = passes.map((pass) => pass.voice.find((voice) => voice.person === person)?.minutes ?? 0);
   const limit = model.voice;
   const byVoice = limit === null ? 0 : fill(sung, () => limit);
   return certain.size + Math.max(apart, byMinutes, byVoice);

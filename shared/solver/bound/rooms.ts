@@ -1,8 +1,9 @@
 import type { Minutes } from '../../domain/flavours';
 import { merged, within, type PassModel, type Problem, type RoomDay, type RoomModel } from '../model';
+import { leastBins } from '../packing';
 import { leastPauses, mostOfRoomDay } from '../pauses';
 import { leastBuilding, leastRig } from './setups';
-import { leastCount, leastPlaces, type Choices } from './stab';
+import { leastPlaces, type Choices } from './stab';
 
 const sumOf = (numbers: readonly number[]): number => numbers.reduce((sum, number) => sum + number, 0);
 
@@ -68,7 +69,8 @@ function leastPlayed(problem: Problem, room: RoomModel, usable: readonly RoomDay
     const blocked = within(events, day.from, day.to);
     return Math.max(0, mostOfRoomDay(problem.rules, day.to - day.from, blocked, longest) - problem.lengths.wrap);
   });
-  const count = leastCount(minutes + leastReserve(problem, minutes, usable.length), capacities);
+  const sizes = passes.map((pass) => pass.minutes);
+  const count = leastBins(sizes, capacities, leastReserve(problem, minutes, usable.length));
   return count === Infinity ? 0 : count;
 }
 

@@ -18,15 +18,3 @@ export function leastPlaces(lists: readonly Choices[], taken: ReadonlySet<number
   }
   return count;
 }
-
-/** The least number of further places whose capacities, the largest first, bring a sum to what is wanted; Infinity where all do not. */
-export function leastCount(wanted: number, capacities: readonly number[]): number {
-  let left = wanted;
-  let count = 0;
-  for (const capacity of [...capacities].sort((a, b) => b - a)) {
-    if (left <= 0) return count;
-    left -= capacity;
-    count += 1;
-  }
-  return left <= 0 ? count : Infinity;
-}

@@ -3,6 +3,7 @@ import type { Minutes, PersonId, WallDate } from '../../../domain/flavours';
 import { merged, type Span } from '../../model';
 import type { NecessaryCondition } from '../condition';
 import { pauseRules } from '../days';
+import { leastBins } from '../../packing';
 import { mostOfDay } from '../../pauses';
 import { placesOf, type Place } from '../places';
 import { common, total, without } from '../../spans';
@@ -33,10 +34,13 @@ export const personMinutes: NecessaryCondition = {
     if (passes.length < 2) return null;
     const dates = new Set(passes.flatMap((pass) => placesOf(view, pass).map(({ date }) => date!)));
     const when = first === last ? `on ${dayWords(first)}` : `from ${dayWords(first)} to ${dayWords(last)}`;
-    const wanted = passes.reduce((sum, pass) => sum + minutesOf(view, pass), 0);
-    const most = [...dates].reduce((sum, date) => sum + mostOnDate(view, person, passes, date), 0);
+    const sizes = passes.map((pass) => minutesOf(view, pass));
+    const wanted = sizes.reduce((sum, size) => sum + size, 0);
+    const capacities = [...dates].map((date) => mostOnDate(view, person, passes, date));
+    const most = capacities.reduce((sum, capacity) => sum + capacity, 0);
     const name = personWords(view.statement, person);
     if (wanted > most) return `${name} would have ${length(wanted)} of passes ${when} and time for ${length(most)} at most`;
+    if (leastBins(sizes, capacities) === Infinity) return `The passes of ${name} are too long to be shared out ${when}`;
     return voiceFails(view, person, passes, dates.size) ? `${name} would sing more ${when} than they may` : null;
   },
 };
@@ -74,11 +78,10 @@ function mostOnDate(view: View, person: PersonId, passes: readonly Pass[], date:
   return most(common(free, windows));
 }
 
-/** Whether the voice minutes are more than all dates allow together, or more passes than dates take over half a day's voice each. */
+/** Whether the voice minutes, none of a pass split, are more than all dates allow together. */
 function voiceFails(view: View, person: PersonId, passes: readonly Pass[], dates: number): boolean {
   const limit = view.statement.people.get(person)!.person.limits?.voice;
   if (limit === undefined || !view.has(`people.${person}.limits`)) return false;
   const voices = passes.map((pass) => (pass.voice?.[person] ? (fieldOf(view, pass, 'voice')?.[person] ?? 0) : 0));
-  const sum = voices.reduce((minutes, voice) => minutes + voice, 0);
-  return sum > limit * dates || voices.filter((voice) => voice * 2 > limit).length > dates;
+  return leastBins(voices, new Array<number>(dates).fill(limit)) === Infinity;
 }

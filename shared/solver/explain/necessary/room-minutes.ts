@@ -1,6 +1,7 @@
 import type { Pass } from '../../../contracts/resources';
 import type { Minutes, RoomId, SetupId } from '../../../domain/flavours';
 import { buildFromBare, leastEntry, mostWork, reserveFor } from '../days';
+import { leastBins } from '../../packing';
 import { placesOf } from '../places';
 import type { OpenWindow, RoomFacts } from '../statement';
 import type { NecessaryCondition } from '../condition';
@@ -34,9 +35,14 @@ export const roomMinutes: NecessaryCondition = {
     if (passes.length < 2) return null;
     const wanted = wantedMinutes(view, facts, windows, passes);
     const most = mostMinutes(view, room, windows, passes);
-    if (wanted <= most) return null;
     const when =
       windows.length === 1 ? `on ${dayWords(windows[0]!.date)}` : `from ${dayWords(windows[0]!.date)} to ${dayWords(windows.at(-1)!.date)}`;
+    if (wanted <= most) {
+      const sizes = passes.map((pass) => minutesOf(view, pass));
+      const capacities = windows.map((window) => mostInWindow(view, room, window, passes));
+      if (leastBins(sizes, capacities) < Infinity) return null;
+      return `The passes in ${roomWords(view.statement, room)} are too long to be shared out ${when}`;
+    }
     return `${roomWords(view.statement, room)} would need ${length(wanted)} of work ${when} and has ${length(most)} at most`;
   },
 };
@@ -64,20 +70,25 @@ function wantedMinutes(view: View, { room, windows: all }: RoomFacts, windows: r
 
 /** The most minutes that the windows leave for that: without wraps, pauses and the listens of all dates but one, the first in use. */
 function mostMinutes(view: View, room: RoomId, windows: readonly OpenWindow[], passes: readonly Pass[]): Minutes {
-  const wrap = roundUp(view, ruleOf(view, 'wrap'));
   const listen = roundUp(view, ruleOf(view, 'listen'));
-  const sum = passes.reduce((minutes, pass) => minutes + minutesOf(view, pass), 0);
-  const rigs = [...view.statement.setups.values()].map(({ rig }) => roundUp(view, rig ?? 0));
-  const changes = view.statement.file.changeovers.map(({ minutes }) => roundUp(view, minutes));
-  const lengths = passes.map((pass) => minutesOf(view, pass));
-  const longest = Math.max(wrap, listen, reserveFor(view, sum), roundUp(view, ruleOf(view, 'changeover')), ...rigs, ...changes, ...lengths);
   let most = 0;
   const gain = new Map<string, Minutes>();
   for (const window of windows) {
-    const work = mostWork(view, room, window, longest);
-    const heard = Math.max(0, work - wrap - listen);
+    const work = mostInWindow(view, room, window, passes);
+    const heard = Math.max(0, work - listen);
     most += heard;
-    gain.set(window.date, (gain.get(window.date) ?? 0) + Math.max(0, work - wrap) - heard);
+    gain.set(window.date, (gain.get(window.date) ?? 0) + work - heard);
   }
   return most + Math.max(0, ...gain.values());
+}
+
+/** The most minutes of work beside the wrap that one window holds. */
+function mostInWindow(view: View, room: RoomId, window: OpenWindow, passes: readonly Pass[]): Minutes {
+  const wrap = roundUp(view, ruleOf(view, 'wrap'));
+  const lengths = passes.map((pass) => minutesOf(view, pass));
+  const sum = lengths.reduce((minutes, length) => minutes + length, 0);
+  const rigs = [...view.statement.setups.values()].map(({ rig }) => roundUp(view, rig ?? 0));
+  const changes = view.statement.file.changeovers.map(({ minutes }) => roundUp(view, minutes));
+  const others = [wrap, roundUp(view, ruleOf(view, 'listen')), reserveFor(view, sum), roundUp(view, ruleOf(view, 'changeover'))];
+  return Math.max(0, mostWork(view, room, window, Math.max(...others, ...rigs, ...changes, ...lengths)) - wrap);
 }
