@@ -86,6 +86,9 @@ describe('a printed run sheet', () => {
   it('runs on in order where names and titles are long, and no page spills over', async () => {
     const file = sheetFile();
     for (const person of file.people) person.short = `${person.short ?? person.id} Montalvo-Szymborska the Younger`;
+    file.production.title =
+      'Nine Sluices, or the Long and Winding History of a Lock-keeper Who Could Not Swim, in Seven Songs and an Afterthought';
+    for (const room of file.rooms) room.name = `${room.name}, the Large One behind the Kiln with the Green Door`;
     for (const song of file.songs) song.title = `${song.title} and the Seventeen Further Verses that Nobody Sang Before`;
     for (const paper of ['A4', 'Letter'] as const) {
       const sheet = theRunSheet(SHEET_DAYS.full, paper, file);
@@ -230,6 +233,7 @@ describe('sheets over the API', () => {
     producer = (await someone(open.app, 'Wren')).agent;
     production = await productionOf(producer, smallProduction());
     draft = await store(smallPlan());
+    await producer.post(`/api/productions/${production}/versions`).send({ plan: draft.id }).expect(201);
   });
   afterAll(() => open.close());
 
@@ -237,9 +241,9 @@ describe('sheets over the API', () => {
     const asked = { inputRevision: 1, seed: 1, iterations: 1, outcome };
     return (await producer.post(`/api/productions/${production}/plans`).send(asked).expect(201)).body as Draft;
   }
-  const get = (agent: Agent, sheet: string, query: object) =>
+  const get = (agent: Agent, sheet: string, query: object, from = production) =>
     agent
-      .get(`/api/productions/${production}/sheets/${sheet}.pdf`)
+      .get(`/api/productions/${from}/sheets/${sheet}.pdf`)
       .query(query)
       .buffer(true)
       .parse((response, done) => {
@@ -250,14 +254,14 @@ describe('sheets over the API', () => {
   const date = '2027-03-08';
 
   it('say the next step while nothing is published', async () => {
-    const answer = await get(producer, 'run-sheet', { date }).expect(404);
+    const fresh = await productionOf(producer, smallProduction());
+    const answer = await get(producer, 'run-sheet', { date }, fresh).expect(404);
     expect(JSON.parse(String(answer.body)).detail).toContain('Publish a plan first');
   });
 
   it('print a draft as a draft and a version under its number', async () => {
     const asDraft = await get(producer, 'run-sheet', { date, version: `draft:${draft.id}` }).expect(200);
     expect(textOfPdf(asDraft.body as Buffer)).toContain('DRAFT');
-    await producer.post(`/api/productions/${production}/versions`).send({ plan: draft.id }).expect(201);
     const answer = await get(producer, 'run-sheet', { date, version: '1', paper: 'Letter' }).expect(200);
     expect(answer.headers['content-type']).toBe('application/pdf');
     expect(answer.headers['content-disposition']).toBe('attachment; filename="BRIDGE_V1_2027-03-08_RUN-SHEET.pdf"');

@@ -1,5 +1,5 @@
-import { fillPages, linesOf, PAGE_MM } from './pages';
-import type { CallDay, CallFact, CallLine, CallPage, Paper } from './sheet';
+import { fillPages, headerExtra, linesOf, PAGE_MM } from './pages';
+import type { CallDay, CallFact, CallLine, CallPage, SheetHead } from './sheet';
 
 /** Heights in millimetres, those of templates/print.css. */
 const HEADER = 37;
@@ -11,7 +11,7 @@ const MOST_LINES = 12;
 
 function heightOfLine(line: CallLine): number {
   if (line.kind === 'pause') return 7.8;
-  const what = 7.7 + (linesOf(`${line.code.repeat(2)} ${line.title}`, COLUMNS.what, 15) - 1) * 6;
+  const what = 7.7 + (linesOf(`${line.code.repeat(2)} ${line.title}`, COLUMNS.what, { points: 15 }) - 1) * 6;
   const below = [line.part, line.note].filter((text) => text !== '').reduce((sum, text) => sum + linesOf(text, COLUMNS.what) * LINE, 0);
   return 2.6 + Math.max(9, what + below, linesOf(line.key, COLUMNS.key) * LINE, linesOf(line.tempo, COLUMNS.tempo) * LINE);
 }
@@ -30,8 +30,12 @@ function split(day: CallDay, room: number): CallDay[] {
 }
 
 /** Puts the days on pages, a day never torn where it fits one page, and the facts on the first page that has room for them. */
-export function callPages(days: readonly CallDay[], facts: CallFact[], paper: Paper): CallPage[] {
-  const room = PAGE_MM[paper].live - HEADER;
+export function callPages(days: readonly CallDay[], facts: CallFact[], head: SheetHead, plays: string): CallPage[] {
+  const extra = headerExtra(`${head.code} ${head.title}`, [
+    { text: head.of, column: 185, points: 38, bold: true },
+    { text: plays, column: 115 },
+  ]);
+  const room = PAGE_MM[head.paper].live - HEADER - extra;
   const pieces = days.flatMap((day) => split(day, room));
   const pages = fillPages(pieces, heightOfDay, room);
   const left = pages.map((page) => room - page.reduce((sum, day) => sum + heightOfDay(day), 0));

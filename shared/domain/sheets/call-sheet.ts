@@ -32,17 +32,15 @@ export function callSheet(file: ProductionFile, plan: MadePlan, request: CallShe
   const person = namesOf(file).person(request.person);
   const name = person?.name ?? person?.short ?? request.person;
   const head = sheetHead(file, request, { what: 'Call sheet', of: name });
-  return {
+  const plays = (person?.plays ?? []).join(', ');
+  const facts = callFacts(file, plan, request.person);
+  const pages = callPages(
+    days.map(({ day }) => day),
+    facts,
     head,
-    person: request.person,
-    name,
-    plays: (person?.plays ?? []).join(', '),
-    pages: callPages(
-      days.map(({ day }) => day),
-      callFacts(file, plan, request.person),
-      head.paper,
-    ),
-  };
+    plays,
+  );
+  return { head, person: request.person, name, plays, pages };
 }
 
 /** Every call of a person in order of time, with what their day holds. */

@@ -10,14 +10,38 @@ export const PAGE_MM: Record<Paper, { width: number; height: number; live: numbe
   Letter: { width: 215.9, height: 279.4, live: 245 },
 };
 
-/** Mean width of a sign of the sheet's face at 12 pt, in millimetres, rounded up. */
-const SIGN_MM = 2.25;
+/** Mean width of a sign of the sheet's face at 12 pt, in millimetres, rounded up; bold ones are wider. */
+const SIGN_MM = { regular: 2.2, bold: 2.4 };
 
-/** How many lines a text takes in a column. Wide signs (CJK, emoji) count double. */
-export function linesOf(text: string, columnMm: number, points = 12): number {
+function widthOf(word: string, sign: number): number {
   let width = 0;
-  for (const sign of text) width += (sign.codePointAt(0)! >= 0x1100 ? 2 : 1) * SIGN_MM * (points / 12);
-  return Math.max(1, Math.ceil(width / columnMm));
+  // Wide signs (CJK, emoji) take two places.
+  for (const one of word) width += (one.codePointAt(0)! >= 0x1100 ? 2 : 1) * sign;
+  return width;
+}
+
+/** How many lines a text takes in a column, word by word; a word that is longer than the column is broken. */
+export function linesOf(text: string, columnMm: number, { points = 12, bold = false } = {}): number {
+  const sign = (bold ? SIGN_MM.bold : SIGN_MM.regular) * (points / 12);
+  let lines = 1;
+  let used = 0;
+  for (const word of text.split(/\s+/)) {
+    const width = widthOf(word, sign);
+    if (used > 0 && used + sign + width > columnMm) {
+      lines++;
+      used = 0;
+    }
+    lines += Math.max(0, Math.ceil(width / columnMm) - 1);
+    used += (used > 0 ? sign : 0) + (width > columnMm ? width % columnMm : width);
+  }
+  return lines;
+}
+
+/** Millimetres that the top of a page takes more where the title of the production or another text of the header needs more lines. */
+export function headerExtra(title: string, others: readonly { text: string; column: number; points?: number; bold?: boolean }[]): number {
+  return [{ text: title, column: 130 }, ...others].reduce((sum, { text, column, points = 12, bold = false }) => {
+    return sum + (linesOf(text, column, { points, bold }) - 1) * points * 0.45;
+  }, 0);
 }
 
 /**

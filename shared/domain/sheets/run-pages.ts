@@ -1,5 +1,5 @@
-import { fillPages, linesOf, PAGE_MM } from './pages';
-import type { Meanwhile, Paper, RunLine, RunPage, RunRow } from './sheet';
+import { fillPages, headerExtra, linesOf, PAGE_MM } from './pages';
+import type { Meanwhile, RunLine, RunPage, RunRoom, RunRow, SheetHead } from './sheet';
 
 /** The most rows that can be read from a stand. */
 const MOST_ROWS = 14;
@@ -14,10 +14,11 @@ const LOW = new Set<RunRow['kind']>(['meal', 'break', 'wrap', 'listen', 'reserve
 
 export function heightOfRunLine(line: RunLine): number {
   if (line.is === 'people') return 2.2 + BODY * linesOf([...line.arrive, ...line.release, 'arrive', 'can go'].join(', '), COLUMNS.beside);
-  if (line.is !== 'row') return 3.4 + 6.2 * linesOf([...('who' in line ? line.who : []), line.says].join(', '), COLUMNS.beside, 14);
-  const title = TITLE.first + (linesOf(`${line.code.repeat(2)} ${line.title}`, COLUMNS.what, 15) - 1) * TITLE.next;
+  if (line.is !== 'row')
+    return 3.4 + 6.2 * linesOf([...('who' in line ? line.who : []), line.says].join(', '), COLUMNS.beside, { points: 14, bold: true });
+  const title = TITLE.first + (linesOf(`${line.code.repeat(2)} ${line.title}`, COLUMNS.what, { points: 15 }) - 1) * TITLE.next;
   const below = [line.task, line.note].filter((text) => text !== '').reduce((sum, text) => sum + linesOf(text, COLUMNS.what) * BODY, 0);
-  const people = linesOf(line.people.join(', '), COLUMNS.people) * BODY;
+  const people = linesOf(line.people.join(', '), COLUMNS.people, { bold: true }) * BODY;
   const setup = linesOf(line.setup, COLUMNS.setup) * BODY;
   return (LOW.has(line.kind) ? PADDING.low : PADDING.row) + Math.max(CLOCK, title + below, people, setup);
 }
@@ -32,8 +33,17 @@ function withoutOrphans(pages: RunLine[][]): RunLine[][] {
 }
 
 /** Splits a room-day into pages. What goes on elsewhere stands on the last one, or on one of its own. */
-export function runPages(lines: readonly RunLine[], meanwhile: Meanwhile[], paper: Paper): RunPage[] {
-  const room = PAGE_MM[paper].live - HEADER;
+export function runPages(
+  lines: readonly RunLine[],
+  meanwhile: Meanwhile[],
+  head: SheetHead,
+  of: Pick<RunRoom, 'room' | 'facts'>,
+): RunPage[] {
+  const extra = headerExtra(`${head.code} ${head.title}`, [
+    { text: of.room, column: 60, points: 20, bold: true },
+    { text: of.facts.join(' · '), column: 105 },
+  ]);
+  const room = PAGE_MM[head.paper].live - HEADER - extra;
   const filled = fillPages(lines, heightOfRunLine, room, MOST_ROWS, (line) => line.is === 'row');
   const pages = withoutOrphans(filled).map((page): RunPage => ({ lines: page, meanwhile: [] }));
   const foot = 9 + meanwhile.reduce((sum, one) => sum + linesOf(one.says, 130) * BODY, 0);

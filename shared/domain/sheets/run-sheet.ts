@@ -53,12 +53,8 @@ export function runSheet(file: ProductionFile, plan: MadePlan, request: RunSheet
     rooms: wanted.map((day): RunRoom => {
       const rows = day.items.map((item) => ({ item, row: rowOf(item, { day, all, file, plan, names, zone }) }));
       const lines = weave(rows, marksOf(day, sameDate, file, plan, names));
-      return {
-        room: day.room.name ?? day.room.id,
-        facts: roomFacts(day, names),
-        ends: endsOf(day, plan, file),
-        pages: runPages(lines, meanwhileOf(day, sameDate, file, names), head.paper),
-      };
+      const of = { room: day.room.name ?? day.room.id, facts: roomFacts(day, names) };
+      return { ...of, ends: endsOf(day, plan, file), pages: runPages(lines, meanwhileOf(day, sameDate, file, names), head, of) };
     }),
     threads: cropped(threads),
   };
