@@ -27,7 +27,7 @@ export function planFigures(summary: PlanSummary, money: PlanMoney | null, stale
   const old = stale ? [{ figure: 'out of date', words: 'Ctrl+Enter plans again', look: true }] : [];
   return [
     { figure: `${musts.placed} of ${musts.all}`, words: 'musts placed', look: musts.placed < musts.all },
-    { figure: oddsInWords(odds), words: 'odds that all musts get done' },
+    { figure: oddsInWords(odds), words: 'odds of all musts' },
     { figure: waiting.total === 0 ? 'none' : length(waiting.total), words: `waiting${most}` },
     { figure: changeovers === 0 ? 'none' : length(changeovers), words: 'changeovers' },
     ...(money ? [{ figure: moneyInWords(money.total, money.currency), words: moneyWords(money) }] : []),
