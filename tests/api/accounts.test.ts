@@ -45,6 +45,22 @@ describe('an account', () => {
     expect(wrong.headers['content-type']).toContain('application/problem+json');
   });
 
+  it('takes as long to refuse an unknown e-mail as a wrong password', async () => {
+    const app = open.withSettings({ passwordCost: 10 });
+    const { email } = await someone(app);
+    const quickest = async (asked: string) => {
+      const times: number[] = [];
+      for (let attempt = 0; attempt < 4; attempt++) {
+        const began = performance.now();
+        await request(app).post('/api/session').send({ email: asked, password: 'not the password' }).expect(401);
+        times.push(performance.now() - began);
+      }
+      return Math.min(...times);
+    };
+    const [known, unknown] = [await quickest(email), await quickest('nobody@example.org')];
+    expect(unknown).toBeGreaterThan(known / 3);
+  });
+
   it.each([
     [{ email: 'no address', name: 'X', password: PASSWORD }, 'email'],
     [{ email: 'x@example.org', name: 'X', password: 'short' }, 'password'],

@@ -1,14 +1,16 @@
 import { randomUUID } from 'node:crypto';
 import { QueryTypes } from 'sequelize';
+import request from 'supertest';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { z } from 'zod';
 import { resourceNames } from '../../shared/contracts/resources';
 import { rowSchemas } from '../../shared/contracts/rows';
-import { migrator } from '../../server/migrations';
+import { createApp } from '../../server/app';
+import { migrate, migrator } from '../../server/migrations';
 import { openDatabase } from '../../server/models/database';
 import { resourceFields } from '../../server/models/tables';
-import { productionOf, someone, type Agent } from '../factories/accounts';
-import { smallPlan, smallProduction } from '../factories/productions';
+import { PASSWORD, productionOf, someone, type Agent } from '../factories/accounts';
+import { aChange, smallPlan, smallProduction } from '../factories/productions';
 import { openApp, type OpenApp } from '../support/app';
 import { freshDatabase } from '../support/database';
 
@@ -125,6 +127,36 @@ describe('the database itself', () => {
     expect(tables).toEqual([{ table_name: 'schema_migrations' }]);
     await migrator(db.sequelize).up();
     expect(await db.users.count()).toBe(0);
+    await db.close();
+  });
+});
+
+describe('two servers on one database', () => {
+  it('bring it up to date one after the other', async () => {
+    const url = await freshDatabase();
+    const [one, two] = [openDatabase(url), openDatabase(url)];
+    await migrator(one.sequelize).down({ to: 0 });
+    await Promise.all([migrate(one.sequelize), migrate(two.sequelize)]);
+    expect(await two.users.count()).toBe(0);
+    await Promise.all([one.close(), two.close()]);
+  });
+
+  it('share sessions, and put the changes of one production in a row', async () => {
+    const db = openDatabase(open.context.config.databaseUrl);
+    const second = createApp({ ...open.context, db });
+    const { agent, email } = await someone(open.app);
+    const elsewhere = request.agent(second);
+    await elsewhere.post('/api/session').send({ email, password: PASSWORD }).expect(200);
+    const production = await productionOf(agent, smallProduction());
+    const path = `/api/productions/${production}/changes`;
+    const answers = await Promise.all(
+      Array.from({ length: 10 }, (_, at) =>
+        (at % 2 ? agent : elsewhere).post(path).send({ changes: [aChange('people', `extra-${at}`, 'create')] }),
+      ),
+    );
+    expect(answers.map(({ body }) => body.revision).sort((a, b) => a - b)).toEqual(answers.map((_, at) => at + 2));
+    await agent.delete('/api/session').expect(204);
+    await elsewhere.get(`/api/productions/${production}`).expect(200);
     await db.close();
   });
 });

@@ -8,15 +8,15 @@ import { endSessions } from '../../http/authenticate';
 import { Refusal } from '../../http/errors';
 import type { UserModel } from '../../models/accounts';
 
-/** A hash of nothing anybody knows: comparing with it takes as long as comparing with a real one. */
-const NOBODY = '$2b$11$CjwHqBqqBQ3jJ3o0ZyUhVu7dVYd0TzC2rA3aYpXhD1Zx5o4s0mJ2m';
+/** A hash of nothing anybody knows: comparing with it takes as long as comparing with a real one of that cost. */
+const nobodysHash = (cost: number) => `$2b$${String(cost).padStart(2, '0')}$CjwHqBqqBQ3jJ3o0ZyUhVu7dVYd0TzC2rA3aYpXhD1Zx5o4s0mJ2m`;
 
 export const normalEmail = (email: string) => email.trim().toLowerCase();
 
 /** The user whose e-mail and password these are; whether the e-mail is known cannot be told from the answer or its time. */
-export async function signedInUser({ db }: Context, asked: z.infer<typeof signInRequest>): Promise<UserModel> {
+export async function signedInUser({ db, config }: Context, asked: z.infer<typeof signInRequest>): Promise<UserModel> {
   const user = await db.users.findOne({ where: { email: normalEmail(asked.email) } });
-  const matches = await bcrypt.compare(asked.password, user?.passwordHash ?? NOBODY);
+  const matches = await bcrypt.compare(asked.password, user?.passwordHash ?? nobodysHash(config.passwordCost));
   if (!user || !matches)
     throw new Refusal('not-signed-in', 'E-mail and password do not match. Check both; the password is case-sensitive.');
   return user;
