@@ -90,13 +90,20 @@ export const useProduction = defineStore('production', () => {
 
   function takeAnswer(answer: ChangesResponse): void {
     const missed = answer.revision > revision.value + 1;
-    const before = revision.value;
-    take(answer.rows, answer.revision);
-    if (missed) void refresh(before);
+    // Until what others wrote in between is here too, the production is not known up to the answer's revision.
+    take(answer.rows, missed ? revision.value : answer.revision);
+    if (missed) catchUp();
   }
 
   function keepBatch(batch: Batch, refusal: { message: string; faults: Fault[] }): void {
     keepRefused(refusal.message, refusal.faults, batch);
+    // Often somebody else was there first; what they wrote shows why.
+    catchUp();
+  }
+
+  /** Brings what was missed; where that fails, the next answer asks for it again, because the revision has not moved. */
+  function catchUp(): void {
+    refresh().catch((reason: unknown) => console.info('what others wrote could not be fetched yet', reason));
   }
 
   function keepRefused(says: string, faults: Fault[], edits: Edit[]): void {
@@ -127,11 +134,11 @@ export const useProduction = defineStore('production', () => {
     person.value = null;
   }
 
-  /** Brings what was written since a revision, by others too. */
-  async function refresh(since = revision.value): Promise<void> {
+  /** Brings what was written since the revision at hand, by others too. */
+  async function refresh(): Promise<void> {
     const production = id.value;
     if (!production) return;
-    const answer = await readProduction(production, since);
+    const answer = await readProduction(production, revision.value);
     if (id.value !== production) return;
     role.value = answer.role;
     person.value = answer.person;
