@@ -163,6 +163,68 @@ export const impossibleTogether: Impossible[] = [
     /Room A would need 12 h 30 of work on Mon 8 March and has 10 h at most/,
   ],
   [
+    'two long passes pinned back to back without a break',
+    () =>
+      withRules(
+        emptyProduction([
+          aPass('x', { minutes: 75, pin: { at: '2027-03-08T12:00' } }),
+          aPass('y', { minutes: 75, pin: { at: '2027-03-08T13:15' } }),
+        ]),
+        {
+          breakAfter: 120,
+          break: 15,
+        },
+      ),
+    ['passes.x.pin', 'passes.y.pin', 'rules.break', 'rules.breakAfter'],
+    /a room works at most 2 h without a pause/,
+  ],
+  [
+    'a guest who is kept from a meal by two pins',
+    () =>
+      withRules(
+        emptyProduction([
+          aPass('x', { people: ['mara'], minutes: 180, pin: { at: '2027-03-08T12:00' } }),
+          aPass('y', { people: ['mara'], room: 'b', minutes: 180, pin: { at: '2027-03-08T15:30' } }),
+        ]),
+        { meal: 45, mealAfter: 300 },
+      ),
+    ['passes.x.pin', 'passes.y.pin', 'rules.meal', 'rules.mealAfter'],
+    /Mara Quill/,
+  ],
+  [
+    'a set-up kept until approved where nothing is listened to',
+    () =>
+      edited(
+        emptyProduction([aPass('x', { setup: 'kit' }), aPass('y', { setup: 'brushes' })], {
+          setups: [
+            { id: 'kit', room: 'a', keepUntil: 'approved' },
+            { id: 'brushes', room: 'a', keepUntil: 'approved' },
+          ],
+        }),
+        (file) => (file.production.rules!.listen = 0),
+      ),
+    ['passes.x.setup', 'passes.y.setup', 'rules.listen'],
+    /there are no listens/,
+  ],
+  [
+    'three set-ups in the two hours of a guest',
+    () =>
+      lysFree(
+        emptyProduction(
+          ['kit', 'brushes', 'aside'].map((setup) => aPass(`on-${setup}`, { setup, people: ['lys'], minutes: 30 })),
+          {
+            setups: ['kit', 'brushes', 'aside'].map((id) => ({ id, room: 'a', rig: 30 })),
+            changeovers: ['kit', 'brushes', 'aside'].flatMap((from) =>
+              ['kit', 'brushes', 'aside'].flatMap((to) => (from === to ? [] : [{ from, to, minutes: 20 }])),
+            ),
+          },
+        ),
+        hours('09', '13:00', '15:00'),
+      ),
+    ['passes.on-aside.setup', 'passes.on-brushes.setup', 'passes.on-kit.setup', 'people.lys.windows'],
+    /Lys Marrow has too little time on Tue 9 March for the changeovers between their passes/,
+  ],
+  [
     'four passes of more than half a day on three days',
     () => emptyProduction(['w', 'x', 'y', 'z'].map((id): Pass => aPass(id, { minutes: 350 }))),
     ['passes.w', 'passes.x', 'passes.y', 'passes.z', 'rooms.a.open'],

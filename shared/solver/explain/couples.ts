@@ -18,10 +18,10 @@ export interface Couple {
   /** People of both. */
   shared: PersonId[];
 }
-interface Gap {
+export interface Gap {
   least: Minutes;
-  /** Whether the first must be listened to before the second. */
-  approved: boolean;
+  /** Where the first must be listened to before the second: minutes between that and the start of the second. */
+  heard: Minutes | null;
 }
 
 /** @returns null where the two do not bind each other at all */
@@ -53,20 +53,47 @@ export function coupleOf(view: View, one: Pass, other: Pass): Couple | null {
     other,
     together,
     meet,
-    oneFirst: backward.length > 0 ? null : gapOf(view, one, other, forward),
-    otherFirst: forward.length > 0 ? null : gapOf(view, other, one, backward),
+    oneFirst: backward.length > 0 ? null : gapOf(view, one, other, forward, shared.length > 0),
+    otherFirst: forward.length > 0 ? null : gapOf(view, other, one, backward, shared.length > 0),
     shared,
   };
 }
 
-function gapOf(view: View, first: Pass, second: Pass, edges: readonly Edge[]): Gap {
+function gapOf(view: View, first: Pass, second: Pass, edges: readonly Edge[], shared: boolean): Gap {
   const lag = edges.reduce((most, edge) => Math.max(most, edge.lag), 0);
-  const approved = edges.some((edge) => edge.approved);
+  const heard = edges.some((edge) => edge.approved) ? 0 : null;
   const sameRoom = roomIdOf(view.statement, first) === roomIdOf(view.statement, second);
-  const differ = first.setup !== undefined && second.setup !== undefined && first.setup !== second.setup;
-  if (!sameRoom || !differ || !fieldOf(view, first, 'setup')) return { least: lag, approved };
-  const setup = fieldOf(view, second, 'setup');
-  return { least: setup === undefined ? lag : Math.max(lag, leastEntry(view, setup)), approved };
+  const change = sameRoom ? changeBetween(view, first, second) : null;
+  const work = minutesOf(view, first) + (change?.minutes ?? 0) + minutesOf(view, second);
+  const pause = sameRoom ? pauseWithin(view, work) : 0;
+  const meal = shared && isLonger(minutesOf(view, first) + minutesOf(view, second), view, 'meal') ? ruleOf(view, 'meal') : 0;
+  return {
+    least: Math.max(lag, (change?.minutes ?? 0) + pause, meal),
+    heard: change?.kept ? change.minutes : heard,
+  };
+}
+
+/** The least minutes of changing from one set-up to another; `kept` = only once the first was listened to. */
+function changeBetween(view: View, first: Pass, second: Pass): { minutes: Minutes; kept: boolean } | null {
+  if (first.setup === undefined || second.setup === undefined || first.setup === second.setup) return null;
+  const { setups, rooms } = view.statement;
+  const from = fieldOf(view, first, 'setup');
+  const to = fieldOf(view, second, 'setup');
+  if (from === undefined || to === undefined) return null;
+  // A room that is cleared overnight takes a set-up down unheard.
+  const standing = rooms.get(roomIdOf(view.statement, first) ?? '')?.room.standing !== false;
+  return { minutes: leastEntry(view, to), kept: standing && setups.get(from)?.keepUntil === 'approved' };
+}
+
+/** Whether so much work asks for a meal or a break in it. */
+function isLonger(work: Minutes, view: View, pause: 'meal' | 'break'): boolean {
+  const most = ruleOf(view, pause === 'meal' ? 'mealAfter' : 'breakAfter');
+  return ruleOf(view, pause) > 0 && (pause === 'meal' || most > 0) && work > most;
+}
+
+/** The longest pause that some work in a room, of more than one item, must have in it. */
+function pauseWithin(view: View, work: Minutes): Minutes {
+  return Math.max(isLonger(work, view, 'meal') ? ruleOf(view, 'meal') : 0, isLonger(work, view, 'break') ? ruleOf(view, 'break') : 0);
 }
 
 function oneSongInTwoRooms(view: View, one: Pass, other: Pass): boolean {
@@ -93,11 +120,17 @@ function lackGear(view: View, one: Pass, other: Pass): boolean {
 }
 
 /** The first minute at which what ended at a minute can have been listened to. Events of kind listen are never dropped: they only help. */
-export function heardBy(view: View, ended: Minute): Minute {
+function heardBy(view: View, ended: Minute): Minute {
   const { statement } = view;
   const events = [...statement.events.values()].filter(({ event, from }) => event.kind === 'listen' && from >= ended).map(({ to }) => to);
   const item = statement.rules.listen > 0 || !view.has('rules.listen') ? [ended + roundUp(view, ruleOf(view, 'listen'))] : [];
   return Math.min(Infinity, ...events, ...item);
+}
+
+/** When the second of two can start at the earliest where the first ended at a minute. */
+export function soonestAfter(view: View, ended: Minute, gap: Gap): Minute {
+  const rested = ended + gap.least;
+  return gap.heard === null ? rested : Math.max(rested, heardBy(view, ended) + gap.heard);
 }
 
 /** Whether the couple fits with one of them in each of these places. */
@@ -114,8 +147,7 @@ export function fits(view: View, couple: Couple, here: Place, there: Place): boo
 
 function inOrder(view: View, couple: Couple, gap: Gap, [first, here]: [Pass, Place], [second, there]: [Pass, Place]): boolean {
   const ended = here.from + minutesOf(view, first);
-  const least = gap.approved ? Math.max(heardBy(view, ended), ended + gap.least) : ended + gap.least;
-  if (least > there.to) return false;
+  if (soonestAfter(view, ended, gap) > there.to) return false;
   if (here.date === null || there.date === null) return true;
   const sameDate = here.date === there.date;
   return couple.shared.every((person) =>

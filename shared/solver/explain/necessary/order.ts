@@ -1,7 +1,7 @@
 import type { Pass } from '../../../contracts/resources';
 import type { Minute, PassId } from '../../../domain/flavours';
 import type { NecessaryCondition } from '../condition';
-import { coupleOf, heardBy, type Couple } from '../couples';
+import { coupleOf, soonestAfter, type Couple, type Gap } from '../couples';
 import { onGrid, placesOf, type Place } from '../places';
 import { minutesOf, neededPasses, roundUp, ruleOf, type View } from '../view';
 import { passWords } from '../words';
@@ -68,12 +68,9 @@ function push(view: View, places: Places, couple: Couple): void {
   else places.set(one.id, []);
 }
 
-type Gap = NonNullable<Couple['oneFirst']>;
-
 /** When a pass that follows can start at the earliest. */
 function soonest(view: View, places: Places, first: Pass, gap: Gap): Minute {
-  const ended = earliest(places.get(first.id)!) + minutesOf(view, first);
-  return gap.approved ? Math.max(heardBy(view, ended), ended + gap.least) : ended + gap.least;
+  return soonestAfter(view, earliest(places.get(first.id)!) + minutesOf(view, first), gap);
 }
 
 function follow(view: View, places: Places, first: Pass, second: Pass, gap: Gap): void {

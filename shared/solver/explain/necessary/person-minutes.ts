@@ -2,7 +2,7 @@ import type { Pass } from '../../../contracts/resources';
 import type { Minutes, PersonId, WallDate } from '../../../domain/flavours';
 import { merged, type Span } from '../../model';
 import type { NecessaryCondition } from '../condition';
-import { pauseRules } from '../days';
+import { leastEntry, pauseRules } from '../days';
 import { leastBins } from '../../packing';
 import { mostOfDay } from '../../pauses';
 import { placesOf, type Place } from '../places';
@@ -41,6 +41,7 @@ export const personMinutes: NecessaryCondition = {
     const name = personWords(view.statement, person);
     if (wanted > most) return `${name} would have ${length(wanted)} of passes ${when} and time for ${length(most)} at most`;
     if (leastBins(sizes, capacities) === Infinity) return `The passes of ${name} are too long to be shared out ${when}`;
+    if (changesFail(view, person, passes, dates)) return `${name} has too little time ${when} for the changeovers between their passes`;
     return voiceFails(view, person, passes, dates.size) ? `${name} would sing more ${when} than they may` : null;
   },
 };
@@ -76,6 +77,27 @@ function mostOnDate(view: View, person: PersonId, passes: readonly Pass[], date:
   // Without time off between, a day is one stay, and a stay lies in one window.
   if (facts.person.away === undefined) return Math.max(0, ...windows.map((window) => most(common(free, [window]))));
   return most(common(free, windows));
+}
+
+/**
+ * Whether passes in one room and the changeovers between them are more than a person's windows hold. On each date one set-up may stand
+ * already; without time off between, the changeovers to the others lie in the person's stay.
+ */
+function changesFail(view: View, person: PersonId, passes: readonly Pass[], dates: ReadonlySet<WallDate>): boolean {
+  const { statement } = view;
+  const { person: model, windows } = statement.people.get(person)!;
+  const room = roomIdOf(statement, passes[0]!)!;
+  if (!windows || model.away !== undefined || passes.some((pass) => roomIdOf(statement, pass) !== room)) return false;
+  if (new Set(passes.map(({ setup }) => setup)).size <= dates.size || !view.has(`people.${person}.windows`)) return false;
+  const setups = new Set(passes.flatMap((pass) => fieldOf(view, pass, 'setup') ?? []));
+  const entries = [...setups].map((setup) => leastEntry(view, setup)).sort((one, other) => one - other);
+  const changes = entries.slice(0, Math.max(0, entries.length - dates.size)).reduce((sum, entry) => sum + entry, 0);
+  const open = statement.rooms.get(room)!.windows;
+  const free = [...dates].map((date) => {
+    const hours = view.has(`rooms.${room}.open`) ? open.filter((window) => window.date === date) : null;
+    return Math.max(0, ...windows.map((window) => total(hours ? common(merged(hours), [window]) : [window])));
+  });
+  return passes.reduce((sum, pass) => sum + minutesOf(view, pass), changes) > free.reduce((sum, minutes) => sum + minutes, 0);
 }
 
 /** Whether the voice minutes, none of a pass split, are more than all dates allow together. */
