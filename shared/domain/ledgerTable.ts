@@ -24,7 +24,7 @@ export const MODE_WORDS: Readonly<Record<PartMode, string>> = {
   guide: 'guide, to be replaced',
   overdub: 'overdub',
   double: 'double',
-  stack: 'stack of voices and layers',
+  stack: 'stack of voices',
   repair: 'repair',
 };
 
