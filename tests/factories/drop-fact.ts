@@ -1,14 +1,13 @@
 import type { Pass, ProductionFile, Rules } from '../../shared/contracts/resources';
 
 /** A rule that asks for nothing. */
-const FREE: Required<Rules> = {
+const FREE: Required<Omit<Rules, 'listen'>> = {
   step: 1,
   mealAfter: 1_000_000,
   meal: 0,
   breakAfter: 0,
   break: 0,
   wrap: 0,
-  listen: 30,
   reserve: 0,
   turnaround: 0,
   changeover: 0,
@@ -20,7 +19,8 @@ export function dropFact(file: ProductionFile, fact: string): ProductionFile {
   const [list, id = '', field] = fact.split('.') as [keyof ProductionFile | 'rules', string, string | undefined];
   const lists = file as unknown as Record<string, { id: string }[]>;
   const found = lists[list]?.find?.((one) => one.id === id) as Record<string, unknown> | undefined;
-  if (list === 'rules') file.production.rules = { ...file.production.rules, [id]: FREE[id as keyof Rules] };
+  if (fact === 'rules.listen') file.production.rules = { ...file.production.rules, listen: file.production.rules?.listen === 0 ? 30 : 1 };
+  else if (list === 'rules') file.production.rules = { ...file.production.rules, [id]: FREE[id as keyof typeof FREE] };
   else if (list === 'rooms' && field === 'open') found!.open = aroundTheClock(file);
   else if (field === 'count') found!.count = 1000;
   else if (field !== undefined) delete found![field];
