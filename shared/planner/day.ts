@@ -45,7 +45,7 @@ export interface PlanDay {
   date: WallDate;
   title: string;
   rooms: DayRoom[];
-  /** Who comes later than the room opens or leaves before it closes: `Lys leaves 17:00`. */
+  /** Events beside the day's work, and who comes later than its rooms open or has to leave before they close: `Lys leaves 17:00`. */
   notes: string[];
   /** What the drawing shows, the same stretch of the clock on every day of a plan. */
   from: Minute;

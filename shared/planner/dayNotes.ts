@@ -11,7 +11,6 @@ export interface DayRoom {
   name: string;
   /** When it is open that day, `10:00–20:00`. */
   open: string;
-  closes: Minute;
   /** When loud work has to end, where that is before the room closes. */
   loudUntil: string | null;
   /** Whether the plan uses it that day. */
@@ -61,7 +60,6 @@ export function roomsOf(date: WallDate, items: TimedItem[], { file, zone, window
   return file.rooms.flatMap((room) => {
     const open = windows.filter((window) => window.room === room.id && window.date === date);
     if (open.length === 0) return [];
-    const closes = Math.max(...open.map(({ to }) => to));
     const loud = (room.loud ?? [])
       .map((hours) => minuteOf(zone, hours.to))
       .filter((until) => open.some(({ from, to }) => from < until && until < to));
@@ -70,7 +68,6 @@ export function roomsOf(date: WallDate, items: TimedItem[], { file, zone, window
         id: room.id,
         name: room.name ?? room.id,
         open: open.map(({ from, to }) => `${clock(zone.wallOf(from))}–${clock(zone.wallOf(to))}`).join(', '),
-        closes,
         loudUntil: loud.length > 0 ? clock(zone.wallOf(Math.max(...loud))) : null,
         used: items.some((item) => item.room === room.id && item.kind !== 'event'),
       },

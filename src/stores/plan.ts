@@ -81,7 +81,6 @@ export const usePlan = defineStore('plan', () => {
   const published = shallowRef<PublishedPlan | null>(null);
   /** What went wrong last, as a sentence with the next step. */
   const trouble = ref<string | null>(null);
-  const keeping = ref(false);
   const opened = ref<string | null>(null);
   let run: PlanningRun | null = null;
 
@@ -220,7 +219,6 @@ export const usePlan = defineStore('plan', () => {
     const id = production.id;
     if (!plan || !id || !may(production.role, 'plan')) return false;
     if (plan.draft) return true;
-    keeping.value = true;
     try {
       // What is on its way comes first: a draft names the revision it was made from.
       await until(() => production.saving).not.toBe('saving', { timeout: ANSWER });
@@ -233,8 +231,6 @@ export const usePlan = defineStore('plan', () => {
     } catch (error) {
       trouble.value = `The plan is not kept on the server yet. ${sentenceOf(error)}`;
       return false;
-    } finally {
-      keeping.value = false;
     }
   }
 
@@ -268,14 +264,12 @@ export const usePlan = defineStore('plan', () => {
     latest,
     published,
     trouble,
-    keeping,
     stale,
     drawn,
     open,
     close,
     solve,
     cancel,
-    stop,
     holdsStill,
     keep,
     publish,
