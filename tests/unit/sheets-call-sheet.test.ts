@@ -58,6 +58,11 @@ describe('the call sheet of a person', () => {
     expect(tuesday!.lines.map((line) => line.title)).toContain('Meal');
   });
 
+  it('keeps an event that is in no room', () => {
+    const [, tuesday] = daysOf(sheetOf('mara'));
+    expect(tuesday!.lines.at(-1)).toMatchObject({ from: '19:30', to: '20:00', title: 'supper for all' });
+  });
+
   it('names the room of each line where the day has several', () => {
     const [tuesday] = daysOf(sheetOf('petra'));
     expect(tuesday!.room).toBe('Room A, Room B');

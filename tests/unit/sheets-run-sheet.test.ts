@@ -120,6 +120,25 @@ describe('the run sheet of a day', () => {
     expect(sheetOf(SHEET_DAYS.full, 'b').rooms.map((room) => room.room)).toEqual(['Room B']);
   });
 
+  it('gives no page to a room in which nothing but an event happens, and notes events elsewhere beside the work', () => {
+    const plan = sheetPlan();
+    plan.items = plan.items.filter((item) => item.room !== 'b' || item.kind === 'event');
+    plan.items.push({
+      kind: 'event',
+      id: 'tuner',
+      room: 'b',
+      start: `${SHEET_DAYS.full}T12:00`,
+      end: `${SHEET_DAYS.full}T12:30`,
+      people: [],
+    });
+    const sheet = runSheet(sheetFile(), plan, { date: SHEET_DAYS.full, edition });
+    expect(sheet?.rooms.map((room) => room.room)).toEqual(['Room A']);
+    expect(sheet?.rooms[0]!.pages.at(-1)!.meanwhile).toEqual([
+      { room: 'Room B', from: '12:00', to: '12:30', says: 'piano tuner' },
+      { room: '', from: '19:30', to: '20:00', says: 'supper for all (Mara)' },
+    ]);
+  });
+
   it('never puts more than fourteen rows on a page, and ends no page with a lonely mark', () => {
     for (const date of Object.values(SHEET_DAYS))
       for (const room of sheetOf(date).rooms)

@@ -5,7 +5,7 @@ import type { CallDay, CallFact, CallLine, CallPage, SheetHead } from './sheet';
 const HEADER = 37;
 const DAY_HEAD = 35;
 const LINE = 5.3;
-const COLUMNS = { what: 74, key: 27, tempo: 39 };
+const COLUMNS = { what: 74, key: 27, tempo: 39, fact: 63 };
 /** The most lines of one day on a page. */
 const MOST_LINES = 12;
 
@@ -21,7 +21,16 @@ function heightOfDay(day: CallDay): number {
 }
 
 export function heightOfFacts(facts: readonly CallFact[]): number {
-  return 6 + facts.reduce((sum, fact) => sum + linesOf(fact.says, 158) * LINE + 1.2, 0);
+  const heights = facts.map((fact) => linesOf(fact.says, COLUMNS.fact) * LINE + 1.2);
+  const total = heights.reduce((sum, height) => sum + height, 0);
+  // Two columns as even as whole facts allow.
+  let left = 0;
+  let least = total;
+  for (const height of heights) {
+    left += height;
+    least = Math.min(least, Math.max(left, total - left));
+  }
+  return 6 + least;
 }
 
 /** A day that is longer than a page goes on under its date on the next one. */

@@ -81,20 +81,31 @@ function callDay(
     ready: clock(call.ready),
     release: { earliest: clock(range.earliest), likely: clock(range.likely), latest: clock(range.latest) },
     overnight: dateOfWall(call.release) !== dateOfWall(call.ready),
-    lines: dayLines(call, here, file, names, zone),
+    lines: dayLines(call, here, file, plan, names, zone),
     continued: false,
   };
 }
 
-/** The person's own day in order: getting ready, passes, meals within the stay, and gaps that are long enough to go for a walk. */
-function dayLines(call: PlanCall, here: readonly RoomDay[], file: ProductionFile, names: Names, zone: ZoneClock): CallLine[] {
+/** The person's own day in order: getting ready, passes, events, meals within the stay, and gaps that are long enough to go for a walk. */
+function dayLines(
+  call: PlanCall,
+  here: readonly RoomDay[],
+  file: ProductionFile,
+  plan: MadePlan,
+  names: Names,
+  zone: ZoneClock,
+): CallLine[] {
   const several = here.length > 1;
   const inStay = (item: PlanItem) => call.arrive <= item.start && item.end <= call.release;
+  const known = new Set(here.flatMap((day) => day.items));
   const entries = here.flatMap((day) =>
     day.items
       .filter((item) => isOwn(item, call.person, day.room.operators) || (isRest(item, call.person) && inStay(item)))
       .map((item) => ({ item, line: lineOf(item, call.person, file, names, several ? (day.room.name ?? day.room.id) : '') })),
   );
+  for (const item of plan.items)
+    if (item.kind === 'event' && item.people.includes(call.person) && inStay(item) && !known.has(item))
+      entries.push({ item, line: lineOf(item, call.person, file, names, '') });
   entries.sort((a, b) => (a.item.start < b.item.start ? -1 : a.item.start > b.item.start ? 1 : 0));
   const lines: CallLine[] = [];
   let until = call.arrive;

@@ -48,3 +48,9 @@ export function ownParts(parts: readonly Part[]): string {
     .map((part) => (part.mode === undefined || partWord(part) === part.mode ? partWord(part) : `${partWord(part)}, ${part.mode}`))
     .join(' · ');
 }
+
+/** What is done in a pass: its parts, and before them what its own name says beyond the title. */
+export function taskOf({ own, parts }: PassWords): string {
+  const words = partsInWords(parts);
+  return [words.includes(own) ? '' : own, words].filter((text) => text !== '').join(' · ');
+}

@@ -14,7 +14,7 @@ export interface RoomDay {
 
 const byStart = (a: PlanItem, b: PlanItem) => (a.start < b.start ? -1 : a.start > b.start ? 1 : a.end < b.end ? -1 : 1);
 
-/** Every room-day that holds at least one item, by date and then in the order of the rooms. */
+/** Every room-day that holds more than events, by date and then in the order of the rooms. */
 export function usedRoomDays(file: ProductionFile, items: readonly PlanItem[]): RoomDay[] {
   const days = file.rooms.flatMap((room) =>
     room.open.map((open) => ({
@@ -25,7 +25,7 @@ export function usedRoomDays(file: ProductionFile, items: readonly PlanItem[]): 
     })),
   );
   return days
-    .filter((day) => day.items.length > 0)
+    .filter((day) => day.items.some((item) => item.kind !== 'event'))
     .map((day, order) => ({ day, order }))
     .sort((a, b) => (a.day.date < b.day.date ? -1 : a.day.date > b.day.date ? 1 : a.order - b.order))
     .map(({ day }) => day);

@@ -7,21 +7,12 @@ import { clock } from '../../time/words';
 import { DEFAULT_RULES } from '../defaults';
 import type { Minutes, RoomId, WallDate } from '../flavours';
 import { marksOf, readyArrivals, type TimedMark } from './marks';
+import { meanwhileOf } from './meanwhile';
 import { type Names, namesOf } from './names';
-import { partsInWords, passWords, type PassWords } from './pass-words';
+import { passWords, taskOf } from './pass-words';
 import { runPages } from './run-pages';
 import { dayCount, type RoomDay, usedDates, usedRoomDays } from './room-days';
-import {
-  fullDate,
-  type Meanwhile,
-  type Paper,
-  type RunLine,
-  type RunRoom,
-  type RunRow,
-  type RunSheet,
-  type SheetEdition,
-  sheetHead,
-} from './sheet';
+import { fullDate, type Paper, type RunLine, type RunRoom, type RunRow, type RunSheet, type SheetEdition, sheetHead } from './sheet';
 
 export interface RunSheetRequest {
   date: WallDate;
@@ -51,10 +42,11 @@ export function runSheet(file: ProductionFile, plan: MadePlan, request: RunSheet
     day: head.of,
     count: dayCount(request.date, usedDates(file, plan.items)),
     rooms: wanted.map((day): RunRoom => {
-      const rows = day.items.map((item) => ({ item, row: rowOf(item, { day, all, file, plan, names, zone }) }));
+      const reading = { day, all, file, plan, names, zone };
+      const rows = day.items.map((item) => ({ item, row: rowOf(item, reading) }));
       const lines = weave(rows, marksOf(day, sameDate, file, plan, names));
       const of = { room: day.room.name ?? day.room.id, facts: roomFacts(day, names) };
-      return { ...of, ends: endsOf(day, plan, file), pages: runPages(lines, meanwhileOf(day, sameDate, file, names), head, of) };
+      return { ...of, ends: endsOf(day, plan, file), pages: runPages(lines, meanwhileOf(day, sameDate, reading), head, of) };
     }),
     threads: cropped(threads),
   };
@@ -142,11 +134,6 @@ function gettingReady(item: PlanItem, day: RoomDay, plan: MadePlan, names: Names
   return readyArrivals(item, day, plan, names).map((call) => `${names.short(call.person)} ${clock(call.arrive)}`);
 }
 
-function taskOf({ own, parts }: PassWords): string {
-  const words = partsInWords(parts);
-  return [words.includes(own) ? '' : own, words].filter((text) => text !== '').join(' · ');
-}
-
 /** What is done in an item that is no pass: which set-up is built, out of which. */
 function plainTask(item: PlanItem, day: RoomDay, all: readonly RoomDay[], names: Names): string {
   if (item.kind === 'rig') return names.setup(item.setup);
@@ -192,26 +179,6 @@ function endsOf(day: RoomDay, plan: MadePlan, file: ProductionFile): RunRoom['en
     return [Math.floor(later / 60), later % 60].map((figure) => String(figure).padStart(2, '0')).join(':');
   };
   return { half: onGrid(odds.p50), nineInTen: onGrid(odds.p90) };
-}
-
-function meanwhileOf(day: RoomDay, sameDate: readonly RoomDay[], file: ProductionFile, names: Names): Meanwhile[] {
-  const elsewhere = sameDate.filter((other) => other.room.id !== day.room.id);
-  return elsewhere.flatMap((other) =>
-    other.items
-      .filter((item) => item.kind === 'pass' && item.start < day.open.to && item.end > day.open.from)
-      .map((item) => {
-        const words = passWords(file, item, names);
-        const task = taskOf(words);
-        const people = item.people.filter((person) => !(other.room.operators ?? []).includes(person)).map((person) => names.short(person));
-        const what = [words.code, task === '' ? words.title : task].filter((text) => text !== '').join(' ');
-        return {
-          room: other.room.name ?? other.room.id,
-          from: clock(item.start),
-          to: clock(item.end),
-          says: people.length > 0 ? `${what} (${people.join(', ')})` : what,
-        };
-      }),
-  );
 }
 
 /** Puts the marks between the rows by the clock: a mark at the start of a row stands before it. */

@@ -111,6 +111,7 @@ export type RunLine = RunRow | PeopleMark | StopMark | MidnightMark;
 
 /** What goes on in another room at the same time. */
 export interface Meanwhile {
+  /** Empty where it is in no room. */
   room: string;
   from: string;
   to: string;
