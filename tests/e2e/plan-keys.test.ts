@@ -77,6 +77,13 @@ it('walks, explains, pins and leaves out passes by keys, and the server holds a 
   expect(await passHere(page)).toBe(pinned);
   expect(await timesHere(page)).toBe(times);
 
+  // A search that is stopped leaves the best plan it had, at once.
+  await press(page, 'Control+Enter');
+  await tabTo(page, 'Stop and keep this plan');
+  await press(page, 'Enter');
+  await page.waitForSelector('[role=progressbar]', { hidden: true, timeout: 1_000 });
+  await toPlan(page);
+
   // The last pass of the last day has nothing after it that would need it.
   for (let before = ''; before !== (await nameHere(page));) {
     before = await nameHere(page);
