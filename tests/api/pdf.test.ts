@@ -6,6 +6,7 @@ import path from 'node:path';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { Draft } from '../../shared/contracts/api';
 import type { MadePlan } from '../../shared/contracts/plan';
+import type { SheetsPlan } from '../../shared/contracts/sheets';
 import type { ProductionFile } from '../../shared/contracts/resources';
 import { callSheet, calledPeople } from '../../shared/domain/sheets/call-sheet';
 import { runSheet } from '../../shared/domain/sheets/run-sheet';
@@ -291,6 +292,36 @@ describe('sheets over the API', () => {
     await get(guest, 'run-sheet', { date }).expect(403);
     await get(guest, 'call-sheet', { person: 'una' }).expect(403);
     await get((await someone(open.app)).agent, 'run-sheet', { date }).expect(404);
+  });
+
+  it('are previewed from the same plan and the production as it was then, as far as the reader may see it', async () => {
+    const plan = `/api/productions/${production}/sheets/plan`;
+    const shown = (await producer.get(plan).expect(200)).body as SheetsPlan;
+    expect(shown).toMatchObject({ shown: { named: '1', version: 1 }, own: null, outcome: smallPlan() });
+    expect(shown.file).toEqual(smallProduction());
+
+    // A newer draft stands first among the choices, and is shown only where it is named.
+    open.wait(60_000);
+    const newer = await store(smallPlan(660));
+    const choices = ((await producer.get(plan).expect(200)).body as SheetsPlan).choices;
+    expect(choices.map(({ named }) => named)).toEqual([`draft:${newer.id}`, '1']);
+    const asDraft = (
+      await producer
+        .get(plan)
+        .query({ version: `draft:${newer.id}` })
+        .expect(200)
+    ).body as SheetsPlan;
+    expect(asDraft).toMatchObject({ shown: { version: null }, outcome: smallPlan(660) });
+
+    const musician = await memberOf(open.app, producer, production, 'musician', 'teo');
+    const own = (await musician.get(plan).expect(200)).body as SheetsPlan;
+    expect(own).toMatchObject({ own: 'teo', choices: [{ named: '1' }] });
+    for (const hidden of ['una@example.org', '+351 555 010 001', '"fee"', '"price"']) expect(JSON.stringify(own)).not.toContain(hidden);
+    await musician
+      .get(plan)
+      .query({ version: `draft:${newer.id}` })
+      .expect(403);
+    await (await memberOf(open.app, producer, production, 'guest')).get(plan).expect(403);
   });
 
   it('refuse what is not there with a sentence', async () => {
