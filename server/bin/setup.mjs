@@ -63,7 +63,8 @@ async function aptInstall(prefix, names) {
     const options = ['-o', 'DPkg::Lock::Timeout=300', '-o', 'Dpkg::Options::=--force-confold', '-o', 'Acquire::Retries=3'];
     const install = ['DEBIAN_FRONTEND=noninteractive', 'apt-get', 'install', '-y', '-q', '--no-install-recommends', ...options, ...names];
     const { code, output } = await asRoot('/usr/bin/env', install);
-    if (code !== 0) throw troubleFrom(`Installing ${names.join(' ')} from Debian`, output + (update.code ? update.output : ''));
+    if (code !== 0)
+      throw troubleFrom(`Installing ${names.join(' ')} from Debian`, output + (update.code ? update.output : ''), { network: true });
   } finally {
     if (quiet) await asRoot('/bin/rm', ['-f', NO_MAIN_CLUSTER]);
   }
@@ -91,7 +92,7 @@ async function installNpmPackages() {
     // The build needs the development packages too, whatever NODE_ENV says.
     const args = ['ci', '--include=dev', '--no-audit', '--no-fund', '--prefer-offline', '--loglevel=error'];
     const { code, output } = await run(npm[0], [...npm.slice(1), ...args]);
-    if (code !== 0) throw troubleFrom('Installing the npm packages', output);
+    if (code !== 0) throw troubleFrom('Installing the npm packages', output, { network: true });
   });
 }
 

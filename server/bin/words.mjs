@@ -42,11 +42,12 @@ const OFFLINE =
  * Turns the output of a failed program into a sentence with a next step.
  * @param {string} what the step that failed
  * @param {string} output what the program wrote
+ * @param {{ network?: boolean }} [needs] whether it loads something, so that words about a network mean one
  */
-export function troubleFrom(what, output) {
+export function troubleFrom(what, output, { network = false } = {}) {
   const tail = output.trim().split('\n').slice(-12).join('\n');
   if (FULL.test(output)) return new Trouble(`${what}: the disk is full.`, 'Free about 1 GB (df -h shows where), then start again.');
-  if (OFFLINE.test(output))
+  if (network && OFFLINE.test(output))
     return new Trouble(
       `${what}: the network did not answer.\n${output.split('\n').find((line) => OFFLINE.test(line))}`,
       'Connect this machine to the network (only this step needs it), then start again.',

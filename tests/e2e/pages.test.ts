@@ -5,7 +5,18 @@ import { freshDatabase } from '../support/database';
 import { publishDemo } from '../support/demo';
 import { startServer, type RunningServer } from '../support/server';
 
-const PAGES = ['/', '/account', '/p/:id/songs', '/p/:id/people', '/p/:id/rooms', '/p/:id/plan', '/p/:id/sheets', '/no-such-page'];
+const PAGES = [
+  '/',
+  '/account',
+  '/invitation/no-such-token',
+  '/p/:id/production',
+  '/p/:id/songs',
+  '/p/:id/people',
+  '/p/:id/rooms',
+  '/p/:id/plan',
+  '/p/:id/sheets',
+  '/no-such-page',
+];
 const THEMES: Theme[] = ['paper', 'dim'];
 
 let server: RunningServer;

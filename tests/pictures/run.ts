@@ -27,7 +27,7 @@ const README_SHOTS: Shot[] = [
 const EVERY_PAGE: Shot[] = [
   '/',
   '/account',
-  ...['songs', 'people', 'rooms', 'plan', 'sheets'].map((section) => `/p/:id/${section}`),
+  ...['production', 'songs', 'people', 'rooms', 'plan', 'sheets'].map((section) => `/p/:id/${section}`),
 ].flatMap((address) =>
   (['paper', 'dim'] as const).map((theme) => ({ name: `${address.split('/').at(-1) || 'start'}-${theme}`, path: address, theme })),
 );
