@@ -12,9 +12,19 @@ const DAY = 120;
 const CALL = 15;
 
 describe('the bound of a plan’s cost', () => {
-  it('is nothing where nothing must be done', () => {
+  it('is nothing where nothing is to be done', () => {
     expect(bound(emptyProduction())).toBe(0);
-    expect(bound(emptyProduction([aPass('x', { priority: 'nice', people: ['mara'] })]))).toBe(0);
+    expect(bound(emptyProduction([aPass('x', { priority: 'nice', minutes: 900 })]))).toBe(500);
+  });
+  it('lets a plan choose between placing a pass and paying for it', () => {
+    const nice = aPass('x', { priority: 'nice', people: ['mara', 'tobin', 'lys', 'oka'] });
+    expect(bound(emptyProduction([nice]))).toBe(DAY + 4 * CALL);
+    const dear = emptyProduction([nice]);
+    dear.production.weights = { nice: 100 };
+    expect(bound(dear)).toBe(100);
+    const both = emptyProduction([nice, aPass('y', { priority: 'should', people: ['mara'] })]);
+    both.production.weights = { nice: 30 };
+    expect(bound(both)).toBe(DAY + CALL + 30);
   });
   it('counts a room-day for each room and a call for each person', () => {
     const file = emptyProduction([aPass('x', { people: ['mara', 'tobin'] }), aPass('y', { room: 'b', people: ['tobin'] })]);
