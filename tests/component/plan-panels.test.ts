@@ -62,6 +62,7 @@ describe('the number line', () => {
   it('says how far from the best a plan may be, only as far as it is known', () => {
     expect(boundInWords({ cost: { total: 1000 }, bound: 1000 })).toBe('proven best');
     expect(boundInWords({ cost: { total: 1000 }, bound: 921 })).toBe('at most 8 % better is possible');
+    expect(boundInWords({ cost: { total: 1000 }, bound: 450 })).toBe('not proven best');
     expect(boundInWords({ cost: { total: 1000 }, bound: 0 })).toBe('not proven best');
   });
 

@@ -12,6 +12,8 @@ export interface PlanFigure {
 }
 
 const MOST_WARNINGS = 2;
+/** A bound further off than this, in percent, says more about the proof than about the plan. */
+const WORTH_SAYING = 30;
 const WEEKDAY = 3;
 
 function moneyWords({ overtime, fees, hire }: PlanMoney): string {
@@ -42,7 +44,7 @@ export function boundInWords(outcome: { cost: { total: number }; bound: number }
   const { bound } = outcome;
   if (bound >= total) return 'proven best';
   const share = total > 0 ? Math.ceil(((total - bound) / total) * 100) : 100;
-  return share <= 60 ? `at most ${share} % better is possible` : 'not proven best';
+  return share <= WORTH_SAYING ? `at most ${share} % better is possible` : 'not proven best';
 }
 
 /** The best plan of a search so far, in words. */
