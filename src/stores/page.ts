@@ -18,6 +18,8 @@ export const usePage = defineStore('page', () => {
   const keyGroups = computed(() => [...groups.value.values()]);
   const announcement = ref('');
   const keysOpen = ref(false);
+  /** What went wrong with the page itself, in a sentence. */
+  const trouble = ref<string>();
 
   /** How many pages were opened in this visit; the first one does not take the focus. */
   const visits = ref(0);
@@ -40,5 +42,5 @@ export const usePage = defineStore('page', () => {
     announcement.value = announcement.value === sentence ? `${sentence}\u00a0` : sentence;
   }
 
-  return { keyGroups, announcement, keysOpen, visits, arrive, addKeys, announce };
+  return { keyGroups, announcement, keysOpen, trouble, visits, arrive, addKeys, announce };
 });
