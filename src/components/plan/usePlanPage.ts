@@ -3,7 +3,7 @@ import type { CallChange } from '../../../shared/contracts/api';
 import type { ProductionFile } from '../../../shared/contracts/resources';
 import type { PassId } from '../../../shared/domain/flavours';
 import { passName } from '../../../shared/domain/passes';
-import { hiddenPaths } from '../../../shared/domain/policy';
+import { hiddenPaths, may } from '../../../shared/domain/policy';
 import { namesOf } from '../../../shared/domain/sheets/names';
 import { callChanges } from '../../../shared/planner/callChanges';
 import { type PlanDay, planDays } from '../../../shared/planner/day';
@@ -56,7 +56,9 @@ export function usePlanPage(): {
   const summary = computed(() => (plan.drawn ? planSummary(file.value, plan.drawn) : null));
   const seesMoney = computed(() => !(hiddenPaths({ role: production.role, person: null }, 'rooms', '')?.includes('price') ?? true));
   const money = computed(() => (plan.drawn && seesMoney.value && hasPrices(file.value) ? planMoney(file.value, plan.drawn) : null));
-  const figures = computed(() => (summary.value ? planFigures(summary.value, money.value, plan.stale && !plan.failed) : []));
+  /** An old plan is news to whoever can plan again; everybody else reads what was published. */
+  const wantsPlanning = computed(() => plan.stale && !plan.failed && may(production.role, 'plan'));
+  const figures = computed(() => (summary.value ? planFigures(summary.value, money.value, wantsPlanning.value) : []));
 
   const subtitle = computed(() => {
     if (!plan.drawn) return '';
