@@ -37,8 +37,8 @@ export function coupleOf(view: View, one: Pass, other: Pass): Couple | null {
     (statement.edgesFrom.get(other.id) ?? []).filter((edge) => edge.to === one.id),
   );
   const together = pairsThatHold(view, (statement.togetherWith.get(one.id) ?? []).filter(between)).length > 0;
-  const theirs = new Set(castOf(statement, other));
-  const shared = castOf(statement, one).filter((person) => theirs.has(person));
+  const theirs = castOf(statement, other);
+  const shared = [...castOf(statement, one)].filter((person) => theirs.has(person));
   const meet =
     shared.length === 0 &&
     roomIdOf(statement, one) !== roomIdOf(statement, other) &&

@@ -39,7 +39,7 @@ function workOut(view: View, pass: Pass): Place[] {
   const calendars = calendarsOf(view, pass);
   const busy = merged([
     ...eventsThatHold(view, facts.events),
-    ...castOf(statement, pass).flatMap((person) => eventsThatHold(view, statement.people.get(person)!.events)),
+    ...[...castOf(statement, pass)].flatMap((person) => eventsThatHold(view, statement.people.get(person)!.events)),
   ]);
   return windows.flatMap((window): Place[] => {
     const inWindow = hoursKnown ? insideOf(view, pass, window, minutes) : window;
@@ -82,7 +82,7 @@ function exceedsALimit(view: View, pass: Pass, minutes: Minutes): boolean {
     if (voice > limits.voice && view.has(`people.${id}.limits`)) return true;
   }
   const room = statement.rooms.get(roomIdOf(statement, pass) ?? '')?.room;
-  const heads = cast.reduce((sum, id) => sum + (statement.people.get(id)!.person.size ?? 1), 0);
+  const heads = [...cast].reduce((sum, id) => sum + (statement.people.get(id)!.person.size ?? 1), 0);
   if (room?.people !== undefined && heads > room.people && view.has(`rooms.${room.id}.people`)) return true;
   return (fieldOf(view, pass, 'uses') ?? []).some(({ gear }) => {
     const count = statement.gear.get(gear)?.gear.count ?? 1;

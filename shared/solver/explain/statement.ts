@@ -60,6 +60,8 @@ export interface Statement {
   events: Map<EventId, EventFacts>;
   passes: Map<PassId, Pass>;
   priorities: Map<PassId, Priority>;
+  /** Everybody of a pass: its people and the operators of its room. */
+  casts: Map<PassId, ReadonlySet<PersonId>>;
   /** Edges by the pass that comes first. */
   edgesFrom: Map<PassId, Edge[]>;
   /** Those that go together with a pass, named by either. */
@@ -128,12 +130,19 @@ export function stateFile(file: ProductionFile): Statement {
         pass.priority ?? (pass.song === undefined ? undefined : priorities.get(pass.song)) ?? 'must',
       ]),
     ),
+    casts: new Map([...passes.values()].map((pass) => [pass.id, castOf(pass, file)])),
     edgesFrom: grouped(edges, (edge) => [edge.from]),
     togetherWith: grouped(pairsOf(passes, 'together'), (pair) => [pair.one, pair.other]),
     apartFrom: grouped(pairsOf(passes, 'apart'), (pair) => [pair.one, pair.other]),
     calendar: calendarOf(clock, [...[...opening.values()].flat(), ...events]),
     minuteOf,
   };
+}
+
+function castOf(pass: Pass, file: ProductionFile): ReadonlySet<PersonId> {
+  const room = pass.room ?? file.setups.find(({ id }) => id === pass.setup)?.room;
+  const operators = file.rooms.find(({ id }) => id === room)?.operators ?? [];
+  return new Set([...(pass.people ?? []), ...operators].filter((id) => file.people.some((person) => person.id === id)));
 }
 
 function calendarOf(clock: ZoneClock, spans: readonly Span[]): CalendarDay[] {

@@ -68,10 +68,8 @@ export function roomIdOf(statement: Statement, pass: Pass): RoomId | undefined {
 }
 
 /** Everybody of a pass: its people and the operators of its room. */
-export function castOf(statement: Statement, pass: Pass): PersonId[] {
-  const room = roomIdOf(statement, pass);
-  const operators = room === undefined ? [] : (statement.rooms.get(room)?.room.operators ?? []);
-  return [...new Set([...(pass.people ?? []), ...operators])].filter((person) => statement.people.has(person));
+export function castOf(statement: Statement, pass: Pass): ReadonlySet<PersonId> {
+  return statement.casts.get(pass.id)!;
 }
 
 export function roundUp(view: View, minutes: Minutes): Minutes {

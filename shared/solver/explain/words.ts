@@ -170,7 +170,7 @@ function afterWords(statement: Statement, one: { pass: string; kind?: string; la
 
 function placeWords(statement: Statement, pass: Pass): string {
   const room = roomIdOf(statement, pass);
-  const cast = castOf(statement, pass).map((person) => personWords(statement, person));
+  const cast = [...castOf(statement, pass)].map((person) => personWords(statement, person));
   const where = room === undefined ? 'in no room' : `in ${roomWords(statement, room)}`;
   return `${likelyMinutes(pass)} min ${where}${cast.length > 0 ? ` with ${listWords(cast)}` : ''}`;
 }

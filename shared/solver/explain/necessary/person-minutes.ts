@@ -13,21 +13,33 @@ import { dayWords, length } from '../../../time/words';
 
 /**
  * What a person must do on some dates fits into their windows, their longest day with its meals, and their voice. Asked of every run of
- * dates, short runs first.
+ * dates that begins with the first date of some pass and ends with the last of one, short runs first.
  */
 export const personMinutes: NecessaryCondition = {
   name: 'person minutes',
-  subjects({ statement }) {
-    const dates = datesOf(statement.rooms.values());
-    const runs = dates.flatMap((_, first) => dates.slice(first).map((__, more) => ({ first, last: first + more })));
-    runs.sort((one, other) => one.last - one.first - (other.last - other.first));
-    return runs.flatMap(({ first, last }) => [...statement.people.keys()].map((person) => `${person} ${dates[first]} ${dates[last]}`));
+  subjects(view) {
+    const stretches = [...view.statement.people.keys()].map((person) => {
+      const passes = neededPasses(view).filter((pass) => castOf(view.statement, pass).has(person));
+      const dates = passes.map((pass) =>
+        placesOf(view, pass)
+          .map(({ date }) => date ?? '')
+          .sort(),
+      );
+      const firsts = [...new Set(dates.flatMap((list) => list.slice(0, 1)))];
+      const lasts = [...new Set(dates.flatMap((list) => list.slice(-1)))];
+      return firsts.flatMap((first) => lasts.filter((last) => first <= last).map((last) => ({ person, first, last })));
+    });
+    const days = ({ first, last }: { first: string; last: string }) => Date.parse(last) - Date.parse(first);
+    return stretches
+      .flat()
+      .sort((one, other) => days(one) - days(other))
+      .map(({ person, first, last }) => `${person} ${first} ${last}`);
   },
   fails(view, subject) {
     const [person = '', first = '', last = ''] = subject.split(' ');
     const within = ({ date }: Place) => date !== null && first <= date && date <= last;
     const passes = neededPasses(view).filter((pass) => {
-      if (!castOf(view.statement, pass).includes(person)) return false;
+      if (!castOf(view.statement, pass).has(person)) return false;
       const places = placesOf(view, pass);
       return places.length > 0 && places.every(within);
     });
@@ -45,12 +57,6 @@ export const personMinutes: NecessaryCondition = {
     return voiceFails(view, person, passes, dates.size) ? `${name} would sing more ${when} than they may` : null;
   },
 };
-
-function datesOf(rooms: Iterable<{ windows: readonly { date: WallDate }[] }>): WallDate[] {
-  const dates = new Set<WallDate>();
-  for (const { windows } of rooms) for (const { date } of windows) dates.add(date);
-  return [...dates].sort();
-}
 
 /** The most minutes of these passes that a person can have on one date. */
 function mostOnDate(view: View, person: PersonId, passes: readonly Pass[], date: WallDate): Minutes {
