@@ -3,7 +3,7 @@ import type { Minute, Minutes, WallDate } from '../../domain/flavours';
 import { EVER, merged, NEVER, type Span } from '../model';
 import { buildFromBare, mostWork, reserveFor } from './days';
 import { common, without } from '../spans';
-import type { OpenWindow } from './statement';
+import { dayOf as calendarDay, type OpenWindow } from './statement';
 import { castOf, eventsThatHold, fieldOf, minutesOf, roomIdOf, roundUp, ruleOf, type View } from './view';
 
 /** Where a pass may start: from the first minute to the last, both included. */
@@ -148,20 +148,18 @@ function dayOf(view: View, pass: Pass, window: OpenWindow | null): Span | null {
   const day = fieldOf(view, pass, 'pin')?.day;
   if (day === undefined) return { from: NEVER, to: EVER };
   if (window) return window.date === day ? { from: NEVER, to: EVER } : null;
-  return calendarDay(view, day);
-}
-
-function calendarDay(view: View, day: WallDate): Span {
-  const days = view.statement.calendar;
-  return days.find(({ date }) => date === day) ?? { from: NEVER, to: EVER };
+  return calendarDay(view.statement.clock, day);
 }
 
 /** Starts in a room without hours, split at the midnights of the days that the file speaks of. */
 function byCalendarDay(view: View, starts: Span): Place[] {
-  const days = view.statement.calendar;
-  const first = days[0]?.from ?? EVER;
-  const end = days.at(-1)?.to ?? EVER;
-  const stretches = [{ from: NEVER, to: first, date: null }, ...days, { from: end, to: EVER + 1, date: null }];
+  const stretches: { from: Minute; to: Minute; date: WallDate | null }[] = [];
+  let at = NEVER;
+  for (const day of view.statement.calendar) {
+    stretches.push({ from: at, to: day.from, date: null }, day);
+    at = day.to;
+  }
+  stretches.push({ from: at, to: EVER + 1, date: null });
   return stretches.flatMap(({ from, to, date }): Place[] => {
     const place = { from: Math.max(from, starts.from), to: Math.min(to - 1, starts.to), window: null, date };
     return place.from <= place.to ? [place] : [];

@@ -3,7 +3,7 @@ import type { Priority } from '../../contracts/values';
 import { DEFAULT_RULES } from '../../domain/defaults';
 import type { EventId, GearId, Minute, Minutes, PassId, PersonId, RoomId, SetupId, WallDate, WallTime } from '../../domain/flavours';
 import { SkippedTimeError, zoneClock, type ZoneClock } from '../../time/wall';
-import { merged, type Span } from '../model';
+import { merged, NEVER, type Span } from '../model';
 
 /** One `open` window of a room. */
 export interface OpenWindow extends Span {
@@ -67,7 +67,7 @@ export interface Statement {
   /** Those that go together with a pass, named by either. */
   togetherWith: Map<PassId, Pair[]>;
   apartFrom: Map<PassId, Pair[]>;
-  /** The calendar days from the first room-day or event to the last, from midnight to midnight. */
+  /** The calendar days on which room-days and events begin and end, from midnight to midnight. */
   calendar: CalendarDay[];
   minuteOf(wall: WallTime): Minute;
 }
@@ -146,23 +146,22 @@ function castOf(pass: Pass, file: ProductionFile): ReadonlySet<PersonId> {
 }
 
 function calendarOf(clock: ZoneClock, spans: readonly Span[]): CalendarDay[] {
-  if (spans.length === 0) return [];
-  const last = clock.dateOf(spans.reduce((latest, { to }) => Math.max(latest, to), -Infinity));
-  const days: CalendarDay[] = [];
-  for (let date = clock.dateOf(spans.reduce((earliest, { from }) => Math.min(earliest, from), Infinity)); date <= last;) {
-    const next = dayAfter(clock, date);
-    days.push({ date, from: beginningOf(clock, date), to: beginningOf(clock, next) });
-    date = next;
-  }
-  return days;
+  const dates = [...new Set(spans.flatMap(({ from, to }) => [clock.dateOf(from), clock.dateOf(to)]))].sort();
+  return dates.map((date) => ({ date, ...dayOf(clock, date) }));
 }
 
-/** The first minute of a date. Some clocks are put forward at midnight; such a day begins at one. */
+/** A calendar day from midnight to midnight. */
+export function dayOf(clock: ZoneClock, date: WallDate): Span {
+  return { from: beginningOf(clock, date), to: beginningOf(clock, dayAfter(clock, date)) };
+}
+
+/** The first minute of a date. Some clocks are put forward at midnight, so that the day begins later, or by a whole day. */
 function beginningOf(clock: ZoneClock, date: WallDate): Minute {
-  const midnight = clock.minuteOf(`${date}T00:00`);
-  const begin = midnight === 'gap' ? clock.minuteOf(`${date}T01:00`) : midnight;
-  if (begin === 'gap') throw new SkippedTimeError(`${date}T01:00`, clock.zone);
-  return begin;
+  for (const time of ['00:00', '01:00', '12:00']) {
+    const begin = clock.minuteOf(`${date}T${time}`);
+    if (begin !== 'gap') return begin;
+  }
+  return NEVER;
 }
 
 /** No clock is put forward or back by as much as half a day, so a day and a half after it begins, the next day is on. */
