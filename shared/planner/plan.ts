@@ -52,7 +52,7 @@ export function planProduction(file: ProductionFile, options: PlanOptions): Plan
   if (conflicts.length > 0) return noPlan('impossible', conflicts, seconds());
   const problem = toProblem(file);
   if (!eventsStand(problem)) return noPlan('unsolved', [], seconds());
-  const bound = lowerBound(problem);
+  let bound = lowerBound(problem);
   const made = (solution: Solution, runs?: number) =>
     madePlan(file, problem, polish(problem, solution), { bound, seed: options.seed, runs, seconds: seconds() });
 
@@ -79,6 +79,7 @@ export function planProduction(file: ProductionFile, options: PlanOptions): Plan
     },
   });
   if (result.score.missing > 0) return noPlan('unsolved', [], seconds());
+  if (result.proven) bound = Math.max(bound, result.score.total);
   return made(result.best);
 }
 

@@ -16,7 +16,7 @@ const WORK: readonly PlanItem['kind'][] = ['pass', 'rig', 'changeover', 'listen'
 export function solutionOf(problem: Problem, items: readonly PlanItem[]): Solution {
   const clock = zoneClock(problem.zone);
   const solution = new Solution(problem);
-  plainSolution(problem, solution, startOrder(problem, new Random(1), 0));
+  plainSolution(problem, solution, startOrder(problem, new Random(1), 0, true));
   const rooms = new Map(problem.rooms.map(({ id }, room) => [id, room]));
   const passes = new Map(problem.passes.map(({ id }, pass) => [id, pass]));
   const starts = new Float64Array(problem.passes.length).fill(Infinity);

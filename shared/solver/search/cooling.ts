@@ -1,7 +1,7 @@
 import type { Random } from './random';
 
-/** A climb cools in so many stages, each by this factor: 0.94⁶⁴ ≈ 1/52. */
-export const STAGES = 64;
+/** A climb cools in stages, each by this factor; in 64 stages to 1/52. */
+const STAGES = 64;
 const COOLING = 0.94;
 const BITS = 10;
 
@@ -14,6 +14,7 @@ export class Cooling {
   private stage = 0;
   private steps = 0;
   private step = 0;
+  private stages = STAGES;
   /** −ln of evenly spread chances. */
   private readonly losses: Float64Array;
 
@@ -23,17 +24,23 @@ export class Cooling {
   }
 
   /** Begins anew: so hot, and for so many steps. */
-  heat(temperature: number, steps: number): void {
+  heat(temperature: number, steps: number, stages = STAGES): void {
+    this.stages = stages;
     this.temperature = temperature;
     this.steps = steps;
     this.step = 0;
     this.stage = 0;
   }
 
+  /** Keeps one temperature. */
+  keep(temperature: number): void {
+    this.temperature = temperature;
+  }
+
   /** One step; false when the climb is over. */
   next(): boolean {
     this.step += 1;
-    while (this.stage < STAGES && this.step * STAGES >= (this.stage + 1) * this.steps) {
+    while (this.stage < this.stages && this.step * this.stages >= (this.stage + 1) * this.steps) {
       this.stage += 1;
       this.temperature *= COOLING;
     }

@@ -2,12 +2,16 @@ import { WORST, type Decoder, type Score } from '../decode';
 import { Solution } from '../solution';
 import { layerRange, put, take } from './order';
 import type { Random } from './random';
+import { latestStarts } from './start';
 
 /** One in so many places is passed over by chance, so that repeated insertions do not always end alike. */
 const BLINK = 12;
+/** Price of a place that leaves no time for what comes after the pass. */
+const TOO_LATE = 2000;
 
 /** Puts passes where the timetable gets best, trying the places of each one after the other. */
 export class Inserter {
+  private readonly latest: number[];
   private readonly candidate: Solution;
   private readonly favourite: Solution;
   private readonly score: Score = { ...WORST };
@@ -20,6 +24,7 @@ export class Inserter {
     private readonly measure: (score: Score) => number,
     private readonly stop: () => boolean,
   ) {
+    this.latest = latestStarts(decoder.board.problem);
     this.candidate = new Solution(decoder.board.problem);
     this.favourite = new Solution(decoder.board.problem);
   }
@@ -48,7 +53,8 @@ export class Inserter {
         candidate.lead[pass] = 0;
         decoder.decode(candidate, this.fromDate(candidate, pass), this.score);
         this.tries += 1;
-        const value = this.measure(this.score);
+        const late = decoder.board.start[pass]! > this.latest[pass]!;
+        const value = this.measure(this.score) + (late ? TOO_LATE : 0);
         if (value >= least) continue;
         least = value;
         favourite.copy(candidate);

@@ -14,6 +14,8 @@ export class Moves {
   private readonly gap: Int32Array;
   private readonly block: Int32Array;
   private readonly movable: number[];
+  /** Passes that the timetable looked at last does not place. */
+  private missing: number[] = [];
 
   constructor(
     private readonly problem: Problem,
@@ -31,6 +33,7 @@ export class Moves {
   /** Looks at the timetable that the decoder holds, for the moves that mend what they see. */
   look(decoder: Decoder): void {
     const { board } = decoder;
+    this.missing = this.missingIn(decoder);
     for (let day = 0; day < this.gap.length; day++) {
       this.gap[day] = 0;
       let seen = 0;
@@ -41,6 +44,11 @@ export class Moves {
         previous = board.itemEnd[item]!;
       }
     }
+  }
+
+  /** Passes that the decoder's timetable does not place, though it might. */
+  missingIn(decoder: Decoder): number[] {
+    return this.movable.filter((pass) => decoder.board.start[pass]! < 0);
   }
 
   change(solution: Solution): number {
@@ -83,7 +91,9 @@ export class Moves {
     return this.movable.filter((other) => other !== pass && related(other));
   }
 
+  /** A pass by chance; what is not placed comes more often. */
   pick(): number {
+    if (this.missing.length > 0 && this.random.below(4) === 0) return this.missing[this.random.below(this.missing.length)]!;
     return this.movable[this.random.below(this.movable.length)]!;
   }
 

@@ -5,6 +5,9 @@ import { Cooling } from './cooling';
 import { Inserter } from './insert';
 import { Moves } from './moves';
 import { Random } from './random';
+import { exactOrder } from './sequence/exact';
+import { sequenceOf, solutionOfOrder } from './sequence/model';
+import { SequenceSearch } from './sequence/anneal';
 import { plainSolution, startOrder } from './start';
 
 export interface SearchOptions {
@@ -20,25 +23,36 @@ export interface SearchOptions {
   bound: number;
 }
 
+/** Where the production is nothing but an order. */
+interface OrderResult {
+  from: Solution;
+  iterations: number;
+  proven: boolean;
+}
+
 export interface SearchResult {
   best: Solution;
   score: Score;
   iterations: number;
+  /** Whether the score is proven to be the best there is. */
+  proven: boolean;
 }
 
 /** A missing must weighs more than any cost. */
 const MISSING = 1e9;
-const STARTS = 6;
+const STARTS = 4;
 /** More passes than these are first laid in plain order; and so many places are tried for each of a hundred passes together. */
 const MOST_TO_BUILD = 150;
 const MOST_PLACES = 2400;
-/** Steps of the first climb; each later one is twice as long, up to a limit. */
+/** A round rebuilds so many parts, each of so many passes, and then tries small changes, more from round to round. */
+const REBUILDS = 60;
+const SMALLEST_PART = 5;
+const SPREAD = 3;
+/** Passes without a place that a rebuilt part takes along at most. */
+const MOST_MISSING = 6;
 const FIRST_CLIMB = 4000;
-const MOST_DOUBLINGS = 6;
-/** Changes looked at to choose a temperature. */
-const SAMPLES = 200;
-/** Every so many climbs one begins anew instead of at the best. */
-const FRESH_EVERY = 3;
+const MOST_ROUNDS = 20;
+const WARMTH = 20;
 
 /** Strain only tips the scales. */
 const STRAIN = 1 / 4096;
@@ -46,14 +60,32 @@ const STRAIN = 1 / 4096;
 const measure = (score: Score) => score.missing * MISSING + score.total + score.strain * STRAIN;
 
 /**
- * Simulated annealing in climbs of growing length. A climb begins at the best, rebuilt in part, or at a timetable built anew. Counts
- * steps, never time, so that a number of iterations gives the same plan everywhere.
+ * Large-neighbourhood search (Shaw, "Using constraint programming and local search methods to solve vehicle routing problems", CP 1998):
+ * passes that have much to do with each other are taken out and given their best places again, now and then for the worse; in between
+ * small changes are annealed. Counts steps, never time, so that a number of iterations gives the same plan everywhere.
  */
 export function search(problem: Problem, options: SearchOptions): SearchResult {
   const climber = new Climber(problem, options);
-  climber.start();
-  for (let climb = 0; climber.goesOn(); climb++) climber.climb(climb);
-  return { best: climber.best, score: climber.bestScore, iterations: climber.iterations };
+  const ordered = searchOrder(problem, options);
+  if (ordered) climber.startFrom(ordered.from, ordered.iterations);
+  const proven = ordered?.proven === true && climber.bestScore.missing === 0;
+  if (!proven) {
+    climber.start();
+    for (let round = 0; climber.goesOn(); round++) climber.round(round);
+  }
+  return { best: climber.best, score: climber.bestScore, iterations: climber.iterations, proven };
+}
+
+/** The best order of a production that is nothing but one: proven where it has few passes, else annealed until all time is spent. */
+function searchOrder(problem: Problem, options: SearchOptions): OrderResult | null {
+  const sequence = sequenceOf(problem);
+  if (!sequence) return null;
+  const exact = exactOrder(sequence, options.stop);
+  if (exact) return { from: solutionOfOrder(sequence, exact), iterations: 1, proven: true };
+  const most = options.iterations ?? Infinity;
+  const annealing: SequenceSearch = new SequenceSearch(sequence, new Random(options.seed), () => annealing.tries >= most || options.stop());
+  annealing.run(0);
+  return { from: solutionOfOrder(sequence, annealing.best), iterations: annealing.tries, proven: false };
 }
 
 class Climber {
@@ -94,6 +126,13 @@ class Climber {
     return this.moves.possible && this.iterations < this.most && !proven && !options.stop();
   }
 
+  /** One solution to begin with, found after so many orders. */
+  startFrom(solution: Solution, iterations: number): void {
+    this.iterations += iterations;
+    this.trial.copy(solution);
+    this.try(0);
+  }
+
   /** The plan given, and first orders of our own. */
   start(): void {
     const { problem, trial } = this;
@@ -101,9 +140,9 @@ class Climber {
       trial.copy(this.options.from);
       this.try(0);
     }
-    plainSolution(problem, trial, startOrder(problem, this.random, 0));
+    plainSolution(problem, trial, startOrder(problem, this.random, 0, true));
     this.try(0);
-    for (let i = 0; i < STARTS && this.goesOn() && (i === 0 || this.bestScore.missing > 0); i++) {
+    for (let i = 0; i < STARTS && this.goesOn(); i++) {
       this.build(i);
       this.try(0);
     }
@@ -112,7 +151,7 @@ class Climber {
   /** Builds a timetable from nothing, pass by pass. */
   private build(shake: number): void {
     const { problem, trial } = this;
-    const order = startOrder(problem, this.random, shake);
+    const order = startOrder(problem, this.random, shake, shake % 2 === 0);
     plainSolution(problem, trial, order);
     if (problem.passes.length > MOST_TO_BUILD) return;
     trial.out.fill(1);
@@ -121,7 +160,7 @@ class Climber {
 
   /** Takes passes that have much to do with each other out, and gives them their best places one after the other. */
   private rebuild(size: number): void {
-    const { problem, trial, random } = this;
+    const { trial, random } = this;
     const taken: number[] = [];
     const first = this.moves.pick();
     const company = this.moves.company(trial, first);
@@ -130,9 +169,8 @@ class Climber {
       const [pass] = company.splice(random.below(company.length), 1);
       if (!taken.includes(pass!)) taken.push(pass!);
     }
-    problem.passes.forEach((pass, i) => {
-      if (this.decoder.board.start[i]! < 0 && pass.days.length > 0 && !pass.leftOut && !taken.includes(i)) taken.unshift(i);
-    });
+    const missing = this.moves.missingIn(this.decoder).filter((pass) => !taken.includes(pass));
+    for (let i = 0; i < MOST_MISSING && missing.length > 0; i++) taken.unshift(...missing.splice(random.below(missing.length), 1));
     for (const pass of taken) trial.out[pass] = 1;
     this.insertAll(taken);
   }
@@ -151,23 +189,20 @@ class Climber {
     this.iterations += inserter.tries + 1;
   }
 
-  /** One climb, until nothing better has come for long. */
-  climb(number: number): void {
+  /** One round: parts of the timetable are rebuilt, then small changes are annealed from the best. */
+  round(number: number): void {
     const { random, moves, trial, current, cooling } = this;
-    const anew = number % FRESH_EVERY === FRESH_EVERY - 1;
-    if (anew) this.build(1 + random.below(10));
-    else {
-      trial.copy(this.best);
-      if (number > 0) {
-        this.decoder.decode(trial, 0, this.score);
-        this.rebuild(3 + random.below(6));
-      }
+    this.goBack();
+    for (let i = 0; i < REBUILDS && this.goesOn(); i++) {
+      cooling.keep(this.warmth());
+      trial.copy(current);
+      this.decoder.decode(trial, 0, this.score);
+      this.rebuild(SMALLEST_PART + random.below(SPREAD));
+      this.try(0);
+      if (cooling.takes(measure(this.score) - this.held)) this.hold(0);
     }
-    this.try(0);
-    this.hold(0);
-    const warmth = this.warmth();
-    cooling.heat(warmth, FIRST_CLIMB * 2 ** Math.min(number, MOST_DOUBLINGS));
-    let now = this.held;
+    this.goBack();
+    cooling.heat(this.warmth(), FIRST_CLIMB * (1 + Math.min(number, MOST_ROUNDS) / 2));
     while (cooling.next() && this.goesOn()) {
       trial.copy(current);
       const touched = moves.change(trial);
@@ -177,28 +212,19 @@ class Climber {
       }
       const fromDate = trial.hasEves() ? 0 : touched;
       this.try(fromDate);
-      const value = measure(this.score);
-      if (!cooling.takes(value - now)) continue;
-      this.hold(fromDate);
-      now = value;
+      if (cooling.takes(measure(this.score) - this.held)) this.hold(fromDate);
     }
   }
 
-  /** How hot a climb begins: as hot as the smaller losses among chance changes. */
+  /** The loss that is taken as often as not: a share of the whole cost. */
   private warmth(): number {
-    const { trial, current, moves } = this;
-    const now = this.held;
-    const losses: number[] = [];
-    for (let i = 0; i < SAMPLES && this.goesOn(); i++) {
-      trial.copy(current);
-      const touched = moves.change(trial);
-      if (touched < 0) continue;
-      this.try(trial.hasEves() ? 0 : touched);
-      const loss = measure(this.score) - now;
-      if (loss > 0 && loss < MISSING) losses.push(loss);
-    }
-    losses.sort((a, b) => a - b);
-    return losses[losses.length >> 2] ?? 1;
+    return this.bestScore.total / WARMTH;
+  }
+
+  private goBack(): void {
+    this.trial.copy(this.best);
+    this.try(0);
+    this.hold(0);
   }
 
   /** Makes the timetable of the trial; a new best is kept. */

@@ -6,18 +6,19 @@ import type { Random } from './random';
  * Passes in the order in which a first timetable takes them up: what others wait for and what has little choice comes early, every pass
  * after those it depends on.
  * @param shake hours by which chance may hold a pass back; 0 for the plain order
+ * @param mustsFirst whether musts come before all others, however scarce
  */
-export function startOrder(problem: Problem, random: Random, shake: number): Int32Array {
+export function startOrder(problem: Problem, random: Random, shake: number, mustsFirst: boolean): Int32Array {
   const { passes } = problem;
   const latest = latestStarts(problem);
   const choice = choices(problem);
   const keys = passes.map((pass, i) => ({
     i,
-    musts: pass.priority === 'must' ? 0 : 1,
+    later: mustsFirst && pass.priority !== 'must' ? 1 : 0,
     urgency: choice[i]! + random.below(shake * 60 + 1),
     latest: latest[i]!,
   }));
-  keys.sort((a, b) => a.musts - b.musts || a.urgency - b.urgency || a.latest - b.latest || a.i - b.i);
+  keys.sort((a, b) => a.later - b.later || a.urgency - b.urgency || a.latest - b.latest || a.i - b.i);
   const order = new Int32Array(passes.length);
   const done = new Uint8Array(passes.length);
   let count = 0;
@@ -65,7 +66,7 @@ function layerOf(problem: Problem, pass: number): number {
 }
 
 /** The latest start of each pass that still leaves time for what follows it. */
-function latestStarts(problem: Problem): number[] {
+export function latestStarts(problem: Problem): number[] {
   const { passes } = problem;
   const latest = passes.map((pass) => pass.starts.at(-1)?.to ?? 0);
   for (let round = 0, moved = true; moved && round < passes.length; round++) {
