@@ -78,15 +78,16 @@ export class Moves {
     return Math.min(from, solution.dateOf(pass));
   }
 
-  /** Passes of the same room-day, people or set-up. */
+  /** Passes of the same room-day, set-up or people, or that wait for each other. */
   company(solution: Solution, pass: number): number[] {
     const { passes } = this.problem;
-    const { people, setup } = passes[pass]!;
-    const kind = this.random.below(3);
+    const { people, setup, after, followers } = passes[pass]!;
+    const kind = this.random.below(4);
     const related = (other: number) => {
       if (kind === 0) return solution.day[other] === solution.day[pass];
       if (kind === 1) return setup >= 0 && passes[other]!.setup === setup;
-      return passes[other]!.people.some((person) => people.includes(person));
+      if (kind === 2) return passes[other]!.people.some((person) => people.includes(person));
+      return followers.includes(other) || after.some((one) => one.pass === other);
     };
     return this.movable.filter((other) => other !== pass && related(other));
   }

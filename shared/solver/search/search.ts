@@ -8,7 +8,7 @@ import { Random } from './random';
 import { exactOrder } from './sequence/exact';
 import { sequenceOf, solutionOfOrder } from './sequence/model';
 import { SequenceSearch } from './sequence/anneal';
-import { plainSolution, startOrder } from './start';
+import { depths, plainSolution, startOrder } from './start';
 
 export interface SearchOptions {
   seed: number;
@@ -40,7 +40,7 @@ export interface SearchResult {
 
 /** A missing must weighs more than any cost. */
 const MISSING = 1e9;
-const STARTS = 4;
+const STARTS = 2;
 /** More passes than these are first laid in plain order; and so many places are tried for each of a hundred passes together. */
 const MOST_TO_BUILD = 150;
 const MOST_PLACES = 2400;
@@ -98,6 +98,8 @@ class Climber {
   private readonly decoder: Decoder;
   private readonly moves: Moves;
   private readonly inserter: Inserter;
+  /** How long a chain of passes each one waits for. */
+  private readonly depth: number[];
   private readonly current: Solution;
   private readonly trial: Solution;
   private readonly score: Score = { ...WORST };
@@ -115,6 +117,7 @@ class Climber {
     this.moves = new Moves(problem, this.random);
     this.cooling = new Cooling(this.random);
     this.inserter = new Inserter(this.decoder, this.random, measure, options.stop);
+    this.depth = depths(problem);
     this.best = new Solution(problem);
     this.current = new Solution(problem);
     this.trial = new Solution(problem);
@@ -172,6 +175,8 @@ class Climber {
     const missing = this.moves.missingIn(this.decoder).filter((pass) => !taken.includes(pass));
     for (let i = 0; i < MOST_MISSING && missing.length > 0; i++) taken.unshift(...missing.splice(random.below(missing.length), 1));
     for (const pass of taken) trial.out[pass] = 1;
+    // What others wait for comes first; the sort keeps the order by chance of the rest.
+    taken.sort((a, b) => this.depth[a]! - this.depth[b]!);
     this.insertAll(taken);
   }
 

@@ -82,3 +82,20 @@ export function latestStarts(problem: Problem): number[] {
   }
   return latest;
 }
+
+/** How many passes each one waits for, one after another. */
+export function depths(problem: Problem): number[] {
+  const { passes } = problem;
+  const depth = passes.map(() => 0);
+  for (let round = 0, moved = true; moved && round < passes.length; round++) {
+    moved = false;
+    passes.forEach((pass, i) => {
+      for (const { pass: before } of pass.after) {
+        if (depth[i]! > depth[before]!) continue;
+        depth[i] = depth[before]! + 1;
+        moved = true;
+      }
+    });
+  }
+  return depth;
+}
