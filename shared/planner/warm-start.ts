@@ -27,21 +27,27 @@ export function solutionOf(problem: Problem, items: readonly PlanItem[]): Soluti
     return from === 'gap' || to === 'gap' || !WORK.includes(item.kind) ? [] : [{ item, from, to }];
   });
   timed.sort((a, b) => a.from - b.from || a.to - b.to);
-  const last = new Map<number, { end: Minute; idle: number }>();
+  const last = new Map<number, { item: PlanItem; end: Minute; idle: number }>();
   for (const { item, from, to } of timed) {
     const room = item.room === undefined ? undefined : rooms.get(item.room);
     const day = problem.days.findIndex((one) => one.room === room && one.from <= from && to <= one.to);
     if (day < 0) continue;
     const before = last.get(day);
     if (!before) solution.begin[day] = from - problem.days[day]!.from;
-    const idle = before ? before.idle + from - before.end : 0;
+    // Pauses between a pass and what it brings along come back by themselves.
+    const idle = !before ? 0 : before.item.kind === 'pass' ? from - before.end : before.idle;
+    last.set(day, { item, end: to, idle });
     const pass = item.kind === 'pass' && item.id !== undefined ? passes.get(item.id) : undefined;
-    last.set(day, { end: to, idle: pass === undefined ? idle : 0 });
     if (pass === undefined) continue;
     starts[pass] = from;
     solution.day[pass] = day;
     solution.lead[pass] = idle;
   }
+  for (const [day, { item }] of last) if (item.kind === 'rig' || item.kind === 'changeover') solution.eve[day] = 1;
+  // What the plan did without is first done without again.
+  problem.passes.forEach(({ priority }, pass) => {
+    if (priority !== 'must' && starts[pass] === Infinity) solution.out[pass] = 1;
+  });
   const order = [...solution.order].sort((a, b) => solution.layerOf(a) - solution.layerOf(b) || starts[a]! - starts[b]! || a - b);
   solution.order.set(order);
   return solution;
