@@ -69,6 +69,20 @@ describe('the bound of a plan’s cost', () => {
     const passes = [aPass('x', { setup: 'kit' }), aPass('y', { setup: 'brushes' })];
     expect(bound(emptyProduction(passes, { setups, changeovers }))).toBe(DAY + 90 + 45);
   });
+  it('changes back where the order of passes asks for it', () => {
+    const setups = ['kit', 'brushes'].map((id) => ({ id, rig: 60 }));
+    const changeovers = [
+      { from: 'kit', to: 'brushes', minutes: 45 },
+      { from: 'brushes', to: 'kit', minutes: 30 },
+    ];
+    const passes = [
+      aPass('x', { setup: 'kit' }),
+      aPass('y', { setup: 'brushes', after: [{ pass: 'x' }] }),
+      aPass('elsewhere', { room: 'b', after: [{ pass: 'y' }] }),
+      aPass('z', { setup: 'kit', after: [{ pass: 'elsewhere' }] }),
+    ];
+    expect(bound(emptyProduction(passes, { setups, changeovers }))).toBe(2 * DAY + 60 + 45 + 30);
+  });
   it('rigs again each day in a room that is cleared', () => {
     const passes = ['08', '09'].map((day) => aPass(`p${day}`, { setup: 'kit', pin: { day: `2027-03-${day}` } }));
     const file = emptyProduction(passes, { setups: [{ id: 'kit', rig: 90 }] });

@@ -29,8 +29,7 @@ function leastOfPlacing(problem: Problem, placed: readonly number[]): number {
   const { weights } = problem;
   let points = 0;
   problem.rooms.forEach((_, room) => {
-    const inside = passes.filter((pass) => pass.room === room);
-    points += leastOfRoom(problem, room, inside);
+    points += leastOfRoom(problem, room, placed);
   });
   problem.people.forEach((_, person) => {
     const theirs = passes.filter((pass) => pass.people.includes(person));

@@ -2,7 +2,7 @@ import type { Minutes } from '../../domain/flavours';
 import { merged, within, type PassModel, type Problem, type RoomDay, type RoomModel } from '../model';
 import { leastBins } from '../packing';
 import { leastPauses, mostOfRoomDay } from '../pauses';
-import { leastBuilding, leastRig } from './setups';
+import { leastAlongChains, leastBuilding, leastRig } from './setups';
 import { leastPlaces, type Choices } from './stab';
 
 const sumOf = (numbers: readonly number[]): number => numbers.reduce((sum, number) => sum + number, 0);
@@ -10,8 +10,10 @@ const sumOf = (numbers: readonly number[]): number => numbers.reduce((sum, numbe
 /**
  * The least points of room-days, overtime and changeovers in one room for the passes that must be in it. Over how many room-days they are
  * spread is open: for each number the least is reckoned, and the smallest counts.
+ * @param placed all passes that are surely placed, in any room, as positions in the problem
  */
-export function leastOfRoom(problem: Problem, index: number, passes: readonly PassModel[]): number {
+export function leastOfRoom(problem: Problem, index: number, placed: readonly number[]): number {
+  const passes = placed.map((pass) => problem.passes[pass]!).filter((pass) => pass.room === index);
   if (passes.length === 0) return 0;
   const room = problem.rooms[index]!;
   const { weights } = problem;
@@ -19,12 +21,8 @@ export function leastOfRoom(problem: Problem, index: number, passes: readonly Pa
   const usable = [...new Set(passes.flatMap((pass) => pass.days))].map((day) => problem.days[day]!);
   const placesOf = (list: readonly PassModel[]) => list.map((pass) => pass.days.map((day) => position.get(day)!));
   const apart = leastPlaces(placesOf(passes), new Set());
-  const built = leastBuilt(
-    problem,
-    room,
-    passes.filter((pass) => pass.setup >= 0),
-    placesOf,
-  );
+  const onSetups = passes.filter((pass) => pass.setup >= 0);
+  const built = Math.max(leastBuilt(problem, room, onSetups, placesOf), leastAlongChains(problem, index, placed));
   const played = Math.max(1, apart, leastPlayed(problem, room, usable, passes));
   let points = Infinity;
   for (let count = played; count <= Math.max(played, room.days.length); count++) {
