@@ -140,7 +140,7 @@ async function writeSheetsTo(folder: string, file: ProductionFile, outcome: Plan
   }
   try {
     const { writeSheets } = await import('../sheets/write');
-    await writeSheets(file, outcome, folder, { now: new Date() });
+    await writeSheets(file, outcome, folder, { now: new Date(), chromium: process.env.CHROMIUM });
     return true;
   } catch (error) {
     complain(`The plan is printed, but its sheets are not written: ${error instanceof Error ? error.message : String(error)}`);
