@@ -31,7 +31,7 @@ export interface PlanOptions {
   onProgress?: (progress: PlanProgress) => void;
   /** Milliseconds of any clock, for `seconds` and the pace of progress only. */
   now?: () => number;
-  /** Items of a plan made before: where they still hold, the search begins there. */
+  /** Items of a plan made before: where they still hold, the search begins there and moves a pass only where that is worth it. */
   start?: readonly PlanItem[];
 }
 
@@ -53,8 +53,9 @@ export function planProduction(file: ProductionFile, options: PlanOptions): Plan
   const problem = toProblem(file);
   if (!eventsStand(problem)) return noPlan('unsolved', [], seconds());
   let bound = lowerBound(problem);
+  const from = options.start && solutionOf(problem, options.start);
   const made = (solution: Solution, runs?: number) =>
-    madePlan(file, problem, polish(problem, solution), { bound, seed: options.seed, runs, seconds: seconds() });
+    madePlan(file, problem, polish(problem, solution, from?.starts), { bound, seed: options.seed, runs, seconds: seconds() });
 
   const { onProgress } = options;
   let waiting: { solution: Solution; iterations: number } | null = null;
@@ -69,7 +70,7 @@ export function planProduction(file: ProductionFile, options: PlanOptions): Plan
     seed: options.seed,
     iterations: options.iterations,
     bound,
-    ...(options.start && { from: solutionOf(problem, options.start) }),
+    from,
     stop: () => {
       report();
       return options.stop();

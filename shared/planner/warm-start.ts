@@ -11,9 +11,10 @@ const WORK: readonly PlanItem['kind'][] = ['pass', 'rig', 'changeover', 'listen'
 
 /**
  * The solution that comes nearest to a plan made before: each pass in its room-day, in the same order and with the same idle time
- * before it. What the problem no longer allows finds its place when the timetable is made.
+ * before it, and the start of each pass in that plan (-1: none). What the problem no longer allows finds its place when the timetable is
+ * made.
  */
-export function solutionOf(problem: Problem, items: readonly PlanItem[]): Solution {
+export function solutionOf(problem: Problem, items: readonly PlanItem[]): { solution: Solution; starts: Int32Array } {
   const clock = zoneClock(problem.zone);
   const solution = new Solution(problem);
   plainSolution(problem, solution, startOrder(problem, new Random(1), 0, true));
@@ -50,5 +51,5 @@ export function solutionOf(problem: Problem, items: readonly PlanItem[]): Soluti
   });
   const order = [...solution.order].sort((a, b) => solution.layerOf(a) - solution.layerOf(b) || starts[a]! - starts[b]! || a - b);
   solution.order.set(order);
-  return solution;
+  return { solution, starts: Int32Array.from(starts, (start) => (start === Infinity ? -1 : start)) };
 }

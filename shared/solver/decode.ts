@@ -4,28 +4,9 @@ import { Closer, emptyTally, type ClosingSink, type Tally } from './closing';
 import { gridAtOrAfter } from './grid';
 import { EVER, type Problem } from './model';
 import { Placer } from './placing';
+import { scoreOf, type Score } from './score';
 import type { Solution } from './solution';
 import { layTail, reserveOf } from './tail';
-
-/** How good a timetable is: missing musts first, then the cost; of two equal ones the less strained is better. */
-export interface Score {
-  missing: number;
-  total: number;
-  strain: number;
-}
-
-export const WORST: Score = { missing: Infinity, total: Infinity, strain: Infinity };
-/** Totals that differ by less are equal: sums of weights with fractions. */
-const HAIR = 1e-6;
-
-export function better(one: Score, other: Score): boolean {
-  if (one.missing !== other.missing) return one.missing < other.missing;
-  if (one.total < other.total - HAIR) return true;
-  return one.total < other.total + HAIR && one.strain < other.strain;
-}
-
-/** Minutes that a pass likes to have between its likely end and the latest one that people, gear, hours and pins allow. */
-const EASE = 90;
 
 /** A state of the decoder: the board's memory and the tally. */
 class Snapshot {
@@ -63,7 +44,11 @@ export class Decoder {
   private pendingCount = 0;
   private readonly empty = emptyTally();
 
-  constructor(private readonly problem: Problem) {
+  /** @param stay the start of each pass in a plan before, -1 where it had none; null where there is no such plan */
+  constructor(
+    private readonly problem: Problem,
+    private readonly stay: Int32Array | null = null,
+  ) {
     this.board = new Board(problem);
     this.closer = new Closer(problem, this.board);
     this.placer = new Placer(problem, this.board, this.closer);
@@ -118,7 +103,7 @@ export class Decoder {
       for (const layer of this.layersOfDate[date]!) for (const day of this.daysOfLayer[layer]!) valid &&= this.closer.closeDay(day);
       this.closer.closePeople(date);
     }
-    this.count(score, valid);
+    scoreOf(problem, board, tally, this.stay, valid, score);
   }
 
   /** The timetable made last becomes the one that later decodes start from. */
@@ -252,45 +237,5 @@ export class Decoder {
     if (rules.breakAfter > 0 && rules.break > 0 && to - breakFrom > rules.breakAfter && breakFrom !== from) return false;
     if (board.passCount[day] === 0) return true;
     return layTail(problem, day, to, mealFrom, breakFrom, reserveOf(problem, board.minutes[day]!), null) < EVER;
-  }
-
-  private count(score: Score, valid: boolean): void {
-    const { problem, board, tally } = this;
-    const { weights, passes } = problem;
-    let missing = valid ? 0 : Infinity;
-    let unplaced = 0;
-    let strain = 0;
-    for (let pass = 0; pass < passes.length; pass++) {
-      const model = passes[pass]!;
-      if (board.start[pass]! >= 0) {
-        strain += this.strainOf(pass);
-        continue;
-      }
-      if (model.priority !== 'must') unplaced += model.unplaced;
-      else if (!model.leftOut) missing += 1;
-    }
-    for (let day = 0; day < problem.days.length; day++) if (board.head[day]! >= 0) strain += board.last[day]! - problem.days[day]!.from;
-    score.strain = strain;
-    score.missing = missing;
-    score.total =
-      tally.waiting +
-      weights.changeover * tally.changeover +
-      weights.day * tally.days +
-      weights.overtime * tally.overtime +
-      weights.call * tally.calls +
-      weights.maybe * tally.maybe +
-      unplaced;
-  }
-
-  /** How little a pass may run late: scarce people belong early in their window, with time for repairs behind. */
-  private strainOf(pass: number): number {
-    const { board, problem } = this;
-    const start = board.start[pass]!;
-    for (const stretch of problem.passes[pass]!.starts) {
-      if (stretch.day !== board.dayOf[pass] || start > stretch.to) continue;
-      const slack = stretch.to - start;
-      return slack < EASE && stretch.from < stretch.to ? 4 * (EASE - slack) : 0;
-    }
-    return 0;
   }
 }

@@ -171,6 +171,19 @@ describe('planning', () => {
     expect(outcome.cost!.total).toBeLessThanOrEqual(totals.at(-1)!);
   });
 
+  it('leaves everything where a plan before had it, but for what a new pin moves', () => {
+    const passes = Array.from({ length: 12 }, (_, i) => aPass(`x${i}`, { people: [['mara', 'tobin', 'lys', 'oka'][i % 4]!], minutes: 45 }));
+    const before = planned(oneRoom(structuredClone(passes)));
+    passes[5]!.pin = { day: '2027-03-10' };
+    const file = oneRoom(passes);
+    const after = planProduction(file, { seed: 9, iterations: 6000, stop: () => false, start: before.items });
+    if (after.cost === null) throw new Error(after.status);
+    expect(checkPlan(file, after).violations).toEqual([]);
+    const moved = passes.filter(({ id }) => passItem(after, id).start !== passItem(before, id).start);
+    expect(moved.map(({ id }) => id)).toContain('x5');
+    expect(moved.length).toBeLessThanOrEqual(4);
+  });
+
   it('has a plan even when it is told to stop at once', () => {
     const file = oneRoom(Array.from({ length: 12 }, (_, i) => aPass(`x${i}`, { people: ['mara'] })));
     const outcome = planProduction(file, { seed: 1, stop: () => true });

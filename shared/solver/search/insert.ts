@@ -1,4 +1,5 @@
-import { WORST, type Decoder, type Score } from '../decode';
+import type { Decoder } from '../decode';
+import { WORST, type Score } from '../score';
 import { Solution } from '../solution';
 import { layerRange, put, take } from './order';
 import type { Random } from './random';

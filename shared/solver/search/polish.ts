@@ -1,13 +1,17 @@
-import { Decoder, WORST, better, type Score } from '../decode';
+import { Decoder } from '../decode';
+import { WORST, better, type Score } from '../score';
 import type { Problem } from '../model';
 import { Solution } from '../solution';
 
 /** With more passes than these only the beginnings of the room-days are gone through. */
 const MOST_LEADS = 150;
 
-/** A copy of a solution in which no room-day begins, and no pass is held back, later than the cost is worth. */
-export function polish(problem: Problem, solution: Solution): Solution {
-  const decoder = new Decoder(problem);
+/**
+ * A copy of a solution in which no room-day begins, and no pass is held back, later than the cost is worth.
+ * @param stay the start of each pass in a plan before, if there is one
+ */
+export function polish(problem: Problem, solution: Solution, stay: Int32Array | null = null): Solution {
+  const decoder = new Decoder(problem, stay);
   const best = new Solution(problem);
   const trial = new Solution(problem);
   const bestScore: Score = { ...WORST };

@@ -1,4 +1,5 @@
-import { Decoder, WORST, better, type Score } from '../decode';
+import { Decoder } from '../decode';
+import { WORST, better, type Score } from '../score';
 import type { Problem } from '../model';
 import { Solution } from '../solution';
 import { Cooling } from './cooling';
@@ -17,8 +18,8 @@ export interface SearchOptions {
   stop: () => boolean;
   /** Hears of every better timetable. */
   onBetter?: (solution: Solution, score: Score, iterations: number) => void;
-  /** Where to begin, where a plan is there already. */
-  from?: Solution;
+  /** A plan made before: where to begin, and the start of each pass in it (-1: none), which should move for a reason only. */
+  from?: { solution: Solution; starts: Int32Array };
   /** A total that cannot be beaten. */
   bound: number;
 }
@@ -53,11 +54,13 @@ const MOST_MISSING = 6;
 const FIRST_CLIMB = 4000;
 const MOST_ROUNDS = 20;
 const WARMTH = 20;
+/** Rounds in which a plan made before is only changed for the better. */
+const COLD_ROUNDS = 2;
 
 /** Strain only tips the scales. */
 const STRAIN = 1 / 4096;
 
-const measure = (score: Score) => score.missing * MISSING + score.total + score.strain * STRAIN;
+const measure = (score: Score) => score.missing * MISSING + score.total + score.unrest + score.strain * STRAIN;
 
 /**
  * Large-neighbourhood search (Shaw, "Using constraint programming and local search methods to solve vehicle routing problems", CP 1998):
@@ -113,7 +116,7 @@ class Climber {
   ) {
     this.most = options.iterations ?? Infinity;
     this.random = new Random(options.seed);
-    this.decoder = new Decoder(problem);
+    this.decoder = new Decoder(problem, options.from?.starts);
     this.moves = new Moves(problem, this.random);
     this.cooling = new Cooling(this.random);
     this.inserter = new Inserter(this.decoder, this.random, measure, options.stop);
@@ -140,9 +143,10 @@ class Climber {
   start(): void {
     const { problem, trial } = this;
     if (this.options.from) {
-      trial.copy(this.options.from);
+      trial.copy(this.options.from.solution);
       this.try(0);
     }
+    if (this.options.from && this.bestScore.missing === 0) return;
     plainSolution(problem, trial, startOrder(problem, this.random, 0, true));
     this.try(0);
     for (let i = 0; i < STARTS && this.goesOn(); i++) {
@@ -199,7 +203,7 @@ class Climber {
     const { random, moves, trial, current, cooling } = this;
     this.goBack();
     for (let i = 0; i < REBUILDS && this.goesOn(); i++) {
-      cooling.keep(this.warmth());
+      cooling.keep(this.warmth(number));
       trial.copy(current);
       this.decoder.decode(trial, 0, this.score);
       this.rebuild(SMALLEST_PART + random.below(SPREAD));
@@ -207,7 +211,7 @@ class Climber {
       if (cooling.takes(measure(this.score) - this.held)) this.hold(0);
     }
     this.goBack();
-    cooling.heat(this.warmth(), FIRST_CLIMB * (1 + Math.min(number, MOST_ROUNDS) / 2));
+    cooling.heat(this.warmth(number), FIRST_CLIMB * (1 + Math.min(number, MOST_ROUNDS) / 2));
     while (cooling.next() && this.goesOn()) {
       trial.copy(current);
       const touched = moves.change(trial);
@@ -221,9 +225,9 @@ class Climber {
     }
   }
 
-  /** The loss that is taken as often as not: a share of the whole cost. */
-  private warmth(): number {
-    return this.bestScore.total / WARMTH;
+  /** How great a loss is taken now and then: a share of the whole cost. A plan made before is first only mended. */
+  private warmth(round: number): number {
+    return this.options.from && round < COLD_ROUNDS ? 0 : this.bestScore.total / WARMTH;
   }
 
   private goBack(): void {
