@@ -82,8 +82,8 @@ export function windowLines(windows: readonly Presence[], around: WallDate): str
   });
 }
 
-/** All windows as text: `always` where there is no limit, `never` where there is none left. */
+/** All windows as text to be edited: nothing where there is no limit, `never` where there is none left. */
 export function writeWindows(windows: readonly Presence[] | undefined, around: WallDate): string {
-  if (!windows) return 'always';
+  if (!windows) return '';
   return windows.length === 0 ? 'never' : windowLines(windows, around).join('\n');
 }

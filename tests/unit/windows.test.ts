@@ -70,7 +70,7 @@ describe('windows in words', () => {
     );
     expect(windowLines(windows, AROUND)).toEqual(['8–10 Mar 10–20']);
     expect(windowLines([span('2027-03-09T14:00', '2027-03-09T17:30', false)], AROUND)).toEqual(['maybe 9 Mar 14–17:30']);
-    expect(writeWindows(undefined, AROUND)).toBe('always');
+    expect(writeWindows(undefined, AROUND)).toBe('');
     expect(writeWindows([], AROUND)).toBe('never');
   });
 
