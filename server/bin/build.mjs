@@ -34,7 +34,11 @@ export const buildServer = ({ outDir = 'build', watch = false } = {}) =>
       sourcemap: true,
       minify: false,
       watch: watch ? {} : null,
-      rollupOptions: { input: serverEntries(), output: { entryFileNames: '[name].js', chunkFileNames: 'parts/[name]-[hash].js' } },
+      rollupOptions: {
+        checks: { bundlerTimings: false },
+        input: serverEntries(),
+        output: { entryFileNames: '[name].js', chunkFileNames: 'parts/[name]-[hash].js' },
+      },
     },
   });
 

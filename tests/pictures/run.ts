@@ -62,7 +62,7 @@ try {
   const server = await startServer({ databaseUrl: database.url });
   const browser = await openBrowser();
   try {
-    const demo = await publishDemo(server.address);
+    const demo = await publishDemo(server.address, { iterations: 40_000 });
     for (const shot of asked ? EVERY_PAGE : README_SHOTS) await shoot(browser, server.address, demo, shot, folder);
     await shootRunSheet(demo, folder);
   } finally {

@@ -23,17 +23,20 @@ export async function exported(client: Client, id: string): Promise<ProductionFi
 interface DemoOptions {
   /** Work on the production before it is planned. */
   before?: (client: Client, id: string) => Promise<void>;
+  /** How long to look for a plan: timetables to try. */
+  iterations?: number;
 }
 
 /** Opens a trial with the demo, plans it with a fixed seed and publishes the plan, all through the API. */
-export async function publishDemo(address: string, { before }: DemoOptions = {}): Promise<PublishedDemo> {
+export async function publishDemo(address: string, { before, iterations = 1000 }: DemoOptions = {}): Promise<PublishedDemo> {
   const client = new Client(address);
   const id = await client.openTrial();
   await before?.(client, id);
   const { revision } = await client.json<Snapshot>('GET', `/api/productions/${id}`);
   const file = await exported(client, id);
-  const work = { seed: 1, iterations: 1000 };
+  const work = { seed: 1, iterations };
   const outcome = planProduction(file, { ...work, stop: () => false });
+  await new Promise((resolve) => setTimeout(resolve, 10)); // connections that the server closed while we planned are noticed
   if (outcome.cost === null) throw new Error(`The demo has no plan: ${outcome.status}`);
   const plan = await client.json<Draft>('POST', `/api/productions/${id}/plans`, { inputRevision: revision, ...work, outcome });
   await client.json('POST', `/api/productions/${id}/versions`, { plan: plan.id });
