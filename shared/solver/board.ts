@@ -1,5 +1,6 @@
 import type { Minute } from '../domain/flavours';
 import { EVER, type Problem } from './model';
+import { spareIn } from './spare';
 
 /** Kinds of items that are laid while a plan grows; pauses, reserve and wrap follow when a date is closed. */
 export const PASS = 0;
@@ -46,6 +47,8 @@ export class Board {
   readonly tail: Int32Array;
   /** 1 once reserve and wrap are laid. */
   readonly closed: Int32Array;
+  /** Minutes of reserve that its gaps can take beside the pauses that they are. */
+  readonly spare: Int32Array;
 
   /** Items in order of laying; `next` leads to the next item of the room-day. `ref` = pass or set-up. */
   readonly itemKind: Int32Array;
@@ -85,7 +88,7 @@ export class Board {
     const sizes = [
       ...Array<number>(3).fill(passes.length),
       ...Array<number>(3).fill(rooms.length),
-      ...Array<number>(11).fill(days.length),
+      ...Array<number>(12).fill(days.length),
       ...Array<number>(5).fill(items),
       ...Array<number>(2).fill(approvals),
       people.length,
@@ -113,6 +116,7 @@ export class Board {
     this.head = part();
     this.tail = part();
     this.closed = part();
+    this.spare = part();
     this.itemKind = part();
     this.itemStart = part();
     this.itemEnd = part();
@@ -213,11 +217,14 @@ export class Board {
   /** Work in a room-day from one minute to another: first and last minute and the runs. */
   work(day: number, from: Minute, to: Minute): void {
     const { rules } = this.problem;
-    if (this.first[day] === EVER) {
+    const opens = this.first[day] === EVER;
+    if (opens) {
       this.first[day] = from;
       this.inherit(day);
     }
-    const gap = from - this.last[day]!;
+    const last = this.last[day]!;
+    const gap = from - last;
+    if (!opens && gap > 0) this.spare[day]! += spareIn(this.problem, day, last, from, this.mealFrom[day]!, this.breakFrom[day]!);
     if (this.last[day] === NONE || gap >= rules.meal) this.mealFrom[day] = from;
     if (this.last[day] === NONE || gap >= rules.break) this.breakFrom[day] = from;
     this.last[day] = to;

@@ -3,6 +3,7 @@ import { CHANGEOVER, RIG, type Board } from './board';
 import { gridAtOrAfter, nameable } from './grid';
 import { EVER, within, type Problem } from './model';
 import { BREAK, MEAL, Rests } from './rests';
+import { spareIn } from './spare';
 import { layTail, reserveOf, type TailSink } from './tail';
 
 /** Minutes and counts that the cost is made of; `waiting` is weighted by the people's fees already. */
@@ -31,6 +32,7 @@ export interface ClosingSink {
 export class Closer {
   readonly rests: Rests;
   private tally: Tally = emptyTally();
+  private spares = false;
   private left: Minutes = 0;
   private lastMeal: Minute = 0;
   private day = 0;
@@ -72,8 +74,18 @@ export class Closer {
     this.left = board.passCount[d]! > 0 ? reserveOf(problem, board.minutes[d]!) : 0;
     this.lastMeal = first;
     this.previous = first;
+    // What finds no place before the wrap goes into the gaps.
+    this.spares = layTail(problem, d, board.last[d]!, board.mealFrom[d]!, board.breakFrom[d]!, this.left, null) >= EVER;
+    const before = board.previousDay(d);
+    const pause = before < 0 ? EVER : first - board.last[before]!;
+    let mealFrom = pause >= problem.rules.meal ? first : board.mealFrom[before]!;
+    let breakFrom = pause >= problem.rules.break ? first : board.breakFrom[before]!;
     for (let item = board.head[d]!; item >= 0; item = board.itemNext[item]!) {
-      if (board.itemStart[item]! > this.previous) this.gap(this.previous, board.itemStart[item]!, true);
+      const start = board.itemStart[item]!;
+      const gap = start - this.previous;
+      if (gap > 0) this.gap(this.spares ? this.useSpare(this.previous, start, mealFrom, breakFrom) : this.previous, start, true);
+      if (gap >= problem.rules.meal) mealFrom = start;
+      if (gap >= problem.rules.break) breakFrom = start;
       this.previous = board.itemEnd[item]!;
       const kind = board.itemKind[item];
       if (kind === RIG || kind === CHANGEOVER) tally.changeover += board.itemEnd[item]! - board.itemStart[item]!;
@@ -112,6 +124,15 @@ export class Closer {
     if (at >= to) return;
     if (pauses) this.pause(at, to);
     else if (fill) this.fill(at, to);
+  }
+
+  /** Puts reserve at the beginning of a gap; answers where the gap goes on. */
+  private useSpare(from: Minute, to: Minute, mealFrom: Minute, breakFrom: Minute): Minute {
+    const length = Math.min(this.left, spareIn(this.problem, this.day, from, to, mealFrom, breakFrom));
+    if (length <= 0) return from;
+    this.left -= length;
+    this.sink?.work('reserve', this.day, from, from + length);
+    return from + length;
   }
 
   private fill(from: Minute, to: Minute): void {

@@ -146,6 +146,8 @@ export class Decoder {
 
   private attempt(pass: number, solution: Solution): void {
     if (this.board.start[pass]! >= 0 || solution.out[pass] === 1 || this.problem.passes[pass]!.leftOut) return;
+    // A group goes where the last of its members is wanted.
+    for (const member of this.problem.passes[pass]!.together) if (solution.layerOf(member) > solution.layerOf(pass)) return;
     if (this.placer.place(pass, solution.day[pass]!, solution)) this.noted(pass);
     else this.pending[this.pendingCount++] = pass;
   }

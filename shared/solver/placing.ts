@@ -6,6 +6,7 @@ import type { Closer } from './closing';
 import { OF_A_PERSON, OF_THE_PASS } from './constraints/all';
 import { onePlace } from './constraints/one-place';
 import { EVER, type Problem } from './model';
+import { spareIn } from './spare';
 import { layTail, reserveOf } from './tail';
 
 /** What a solution says about a pass beyond its place in the order. */
@@ -55,6 +56,7 @@ export class Placer {
   /** One start for all members: each is asked in turn until nobody wants a later one. */
   private placeTogether(group: readonly number[], pass: number, day: number, wishes: Wishes): boolean {
     const { before } = this;
+    if (group.some((member) => this.problem.passes[member]!.leftOut || wishes.out[member] === 1)) return false;
     this.board.save(before);
     const days = group.map((member) => (member === pass ? day : this.dayBeside(member, day, wishes)));
     if (days.includes(-1)) return false;
@@ -211,14 +213,18 @@ export class Placer {
     let last = from < 0 ? -1 : board.last[from]!;
     let mealFrom = from < 0 ? -1 : board.mealFrom[from]!;
     let breakFrom = from < 0 ? -1 : board.breakFrom[from]!;
+    let { [day]: spare = 0 } = board.spare;
     for (let k = 0; k < chain.count; k++) {
       const start = chain.start[k]!;
+      if (start > last && (k > 0 || !fresh)) spare += spareIn(problem, day, last, start, mealFrom, breakFrom);
       if (last < 0 || start - last >= rules.meal) mealFrom = start;
       if (last < 0 || start - last >= rules.break) breakFrom = start;
       last = chain.end[k]!;
     }
-    const minutes = board.minutes[day]! + passMinutes;
-    return layTail(problem, day, last, mealFrom, breakFrom, reserveOf(problem, minutes), null) < EVER;
+    const reserve = reserveOf(problem, board.minutes[day]! + passMinutes);
+    if (layTail(problem, day, last, mealFrom, breakFrom, reserve, null) < EVER) return true;
+    const left = reserve - spare;
+    return left < reserve && layTail(problem, day, last, mealFrom, breakFrom, Math.max(0, left), null) < EVER;
   }
 
   /** Writes the chain as laid, and the pass, into the board. */

@@ -99,13 +99,17 @@ class Climber {
   private readonly most: number;
   private readonly random: Random;
   private readonly decoder: Decoder;
+  /** Makes timetables from nothing, beside the one that is being changed. */
+  private readonly witness: Decoder;
   private readonly moves: Moves;
   private readonly inserter: Inserter;
   /** How long a chain of passes each one waits for. */
   private readonly depth: number[];
   private readonly current: Solution;
   private readonly trial: Solution;
+  private readonly candidate: Solution;
   private readonly score: Score = { ...WORST };
+  private readonly again: Score = { ...WORST };
   private readonly cooling: Cooling;
   /** What the timetable to change is worth. */
   private held = Infinity;
@@ -117,6 +121,7 @@ class Climber {
     this.most = options.iterations ?? Infinity;
     this.random = new Random(options.seed);
     this.decoder = new Decoder(problem, options.from?.starts);
+    this.witness = new Decoder(problem, options.from?.starts);
     this.moves = new Moves(problem, this.random);
     this.cooling = new Cooling(this.random);
     this.inserter = new Inserter(this.decoder, this.random, measure, options.stop);
@@ -124,6 +129,7 @@ class Climber {
     this.best = new Solution(problem);
     this.current = new Solution(problem);
     this.trial = new Solution(problem);
+    this.candidate = new Solution(problem);
   }
 
   goesOn(): boolean {
@@ -236,15 +242,18 @@ class Climber {
     this.hold(0);
   }
 
-  /** Makes the timetable of the trial; a new best is kept. */
+  /** Makes the timetable of the trial; a new best is kept, once it is seen to come out alike when it is made from nothing. */
   private try(fromDate: number): void {
-    const { decoder, trial, score, bestScore } = this;
+    const { decoder, trial, score, bestScore, candidate, again } = this;
     decoder.decode(trial, fromDate, score);
     this.iterations += 1;
     if (!better(score, bestScore)) return;
-    Object.assign(bestScore, score);
-    this.best.copy(trial);
-    decoder.adopt(this.best);
+    candidate.copy(trial);
+    decoder.adopt(candidate);
+    this.witness.decode(candidate, 0, again);
+    if (!better(again, bestScore)) return;
+    Object.assign(bestScore, again);
+    this.best.copy(candidate);
     this.options.onBetter?.(this.best, bestScore, this.iterations);
   }
 
