@@ -32,6 +32,7 @@ export function scheduleOf(file: ProductionFile, problem: Problem, solution: Sol
   problem.passes.forEach((_, pass) => {
     if (decoder.board.start[pass]! < 0) final.out[pass] = 1;
   });
+  decoder.decodeExactly(final, score);
   const writer = new Writer(file, problem, decoder);
   decoder.decode(final, 0, score, writer);
   writer.finish();

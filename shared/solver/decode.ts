@@ -106,6 +106,12 @@ export class Decoder {
     scoreOf(problem, board, tally, this.stay, valid, score);
   }
 
+  /** Decodes from nothing until nobody is asked to be ready for a rig in vain. */
+  decodeExactly(solution: Solution, score: Score): void {
+    do this.decode(solution, 0, score);
+    while (this.placer.dropIdleReady());
+  }
+
   /** The timetable made last becomes the one that later decodes start from. */
   keep(fromDate: number): void {
     for (let date = fromDate + 1; date < this.kept.length; date++) {

@@ -29,6 +29,8 @@ export class Placer {
   private readonly before: Int32Array;
   /** Ready minutes of a person for a set-up: `ready[setup * people + person]`. */
   private readonly ready: Int32Array;
+  /** Rigs for which somebody turned out not to be needed: room-day times people plus person. */
+  private readonly idle = new Set<number>();
 
   constructor(
     private readonly problem: Problem,
@@ -53,13 +55,32 @@ export class Placer {
     return true;
   }
 
+  /**
+   * Looks through the ready minutes on the board for such of people who in the end play in the set-up at other times only, and asks them no
+   * more. True where there were some.
+   */
+  dropIdleReady(): boolean {
+    const { board, problem } = this;
+    const { rigSetup, rigEnd } = board;
+    const before = this.idle.size;
+    problem.people.forEach(({ passes }, person) => {
+      const offset = board.offset[person]!;
+      for (let i = offset; i < offset + board.entryCount[person]!; i++) {
+        const day = READY_ENTRY - board.entryRef[i]!;
+        const needed = (pass: number) => problem.passes[pass]!.setup === rigSetup[day] && board.start[pass]! >= rigEnd[day]!;
+        if (day >= 0 && !passes.some(needed)) this.idle.add(day * problem.people.length + person);
+      }
+    });
+    return this.idle.size > before;
+  }
+
   /** One start for all members: each is asked in turn until nobody wants a later one. */
   private placeTogether(group: readonly number[], pass: number, day: number, wishes: Wishes): boolean {
-    const { before } = this;
     if (group.some((member) => this.problem.passes[member]!.leftOut || wishes.out[member] === 1)) return false;
-    this.board.save(before);
     const days = group.map((member) => (member === pass ? day : this.dayBeside(member, day, wishes)));
-    if (days.includes(-1)) return false;
+    if (days.includes(-1) || !days.every((one) => this.opened(one))) return false;
+    const { before } = this;
+    this.board.save(before);
     for (let target = NO_TARGET, tries = 0; tries < 500; tries++) {
       let agreed = target;
       let placed = 0;
@@ -176,6 +197,7 @@ export class Placer {
     const people = problem.people.length;
     attempt.readyFrom = -1;
     attempt.readyMoves = false;
+    if (this.idle.has(day * people + person)) return;
     if (chain.rigAt >= 0) {
       const minutes = this.ready[problem.passes[attempt.pass]!.setup * people + person]!;
       if (minutes === 0) return;

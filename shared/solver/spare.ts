@@ -10,9 +10,10 @@ export function spareIn(problem: Problem, dayIndex: number, from: Minute, to: Mi
   const { rules, lengths } = problem;
   const day = problem.days[dayIndex]!;
   if (day.grid.length > 1) return 0;
+  let free = to;
   for (const index of problem.rooms[day.room]!.events) {
     const event = problem.events[index]!;
-    if (event.from < to && from < event.to) return 0;
+    if (event.from < free && from < event.to) free = event.from;
   }
   const meals = rules.meal > 0;
   const breaks = rules.breakAfter > 0 && rules.break > 0;
@@ -21,6 +22,7 @@ export function spareIn(problem: Problem, dayIndex: number, from: Minute, to: Mi
   if (meals && gap >= lengths.meal) minutes = gap - lengths.meal;
   else if (breaks && gap >= lengths.break) minutes = gap - lengths.break;
   else if ((meals && gap >= rules.meal) || (breaks && gap >= rules.break)) return 0;
+  minutes = Math.min(minutes, free - from);
   if (meals) minutes = Math.min(minutes, rules.mealAfter - (from - mealFrom));
   if (breaks) minutes = Math.min(minutes, rules.breakAfter - (from - breakFrom));
   return minutes < rules.step ? 0 : minutes - (minutes % rules.step);
