@@ -10,4 +10,5 @@ it('keeps everything it called saved, once, through twenty kills with -9 while p
   await surviveKills(await freshDatabase(), 20, seed);
 });
 
-it('comes up by itself with all that was saved when start command and database are killed with -9 fifteen times', () => surviveFullKills(15));
+it('comes up by itself with all that was saved when start command and database are killed with -9 fifteen times', () =>
+  surviveFullKills(15));
