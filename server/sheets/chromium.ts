@@ -8,7 +8,6 @@ import puppeteer, { type Browser } from 'puppeteer-core';
 const PLACES = ['/usr/bin/chromium-headless-shell', '/usr/lib/chromium/chromium-headless-shell', '/usr/bin/chromium'];
 
 const FLAGS = [
-  ...(process.getuid?.() === 0 ? ['--no-sandbox'] : []), // Chromium refuses its sandbox to root.
   '--disable-gpu',
   '--disable-dev-shm-usage',
   '--disable-quic',
@@ -53,8 +52,17 @@ export interface RunningBrowser {
   end(): Promise<void>;
 }
 
-/** Starts a Chromium that reaches nothing, talks through a pipe (so that it ends with this process) and leaves no profile. */
+/**
+ * Starts a Chromium that reaches nothing, talks through a pipe (so that it ends with this process) and leaves no profile. It refuses its
+ * sandbox to root, and has none where the system lets nobody else make namespaces, as in many containers; then it runs without: what it
+ * is given to print is our own, no script runs in it, and every connection is closed.
+ */
 export async function launchChromium(executable: string): Promise<RunningBrowser> {
+  const withoutSandbox = () => launch(executable, ['--no-sandbox']);
+  return process.getuid?.() === 0 ? withoutSandbox() : launch(executable, []).catch(withoutSandbox);
+}
+
+async function launch(executable: string, flags: string[]): Promise<RunningBrowser> {
   const folder = os.tmpdir();
   await removeOrphans(folder);
   const profile = await mkdtemp(path.join(folder, `${PROFILE}${process.pid}-`));
@@ -65,7 +73,7 @@ export async function launchChromium(executable: string): Promise<RunningBrowser
       headless: executable.endsWith('headless-shell') ? 'shell' : true,
       pipe: true,
       userDataDir: profile,
-      args: FLAGS,
+      args: [...FLAGS, ...flags],
       timeout: 30_000,
       protocolTimeout: 45_000,
       env: { PATH: process.env.PATH, HOME: profile, LANG: 'C.UTF-8', TZ: 'UTC' },
