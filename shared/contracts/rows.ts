@@ -1,5 +1,6 @@
 import { z } from 'zod';
-import { changeover, event, gear, part, pass, person, production, room, setup, song, type ResourceName } from './resources';
+import { production } from './head';
+import { changeover, event, gear, part, pass, person, room, setup, song, type ResourceName } from './resources';
 import { flag } from './values';
 
 /**

@@ -115,3 +115,11 @@ export type PartMode = z.infer<typeof partMode>;
 
 export const list = <Item extends z.ZodType>(item: Item, most = 2000) =>
   z.array(item, { error: 'a list' }).max(most, { error: `a list of at most ${most}` });
+
+/**
+ * A field of the file that this version does not know, kept for export; `path` is relative to its resource. The production's paths
+ * begin at the root of the file, because its rules and weights stand beside it: `[production, place, floor]`, `[rules, tea]`.
+ */
+export const extraField = z.object({ path: z.array(z.union([z.string(), z.number()])), value: z.unknown() });
+export type ExtraField = z.infer<typeof extraField>;
+export const extra = z.array(extraField).optional();

@@ -1,11 +1,11 @@
 import type { Change, Row } from '../contracts/changes';
+import type { Production } from '../contracts/head';
 import type {
   Changeover,
   Gear,
   Part,
   Pass,
   Person,
-  Production,
   ProductionFile,
   ResourceName,
   Room,

@@ -1,4 +1,4 @@
-import { production } from '../contracts/resources';
+import { production } from '../contracts/head';
 import { changeoverFaults, emptyPins, overlappingHours, passesWithoutRoom, skippedTimes } from './checks';
 import { fieldOf, type Fields } from './paths';
 import { derivedIdFaults, repeatedIds, selfReferences, strangeParts, unknownReferences } from './references';

@@ -1,6 +1,8 @@
 import type { z } from 'zod';
 import type { Fault } from '../contracts/api';
+import * as head from '../contracts/head';
 import * as resources from '../contracts/resources';
+import type { ExtraField } from '../contracts/values';
 import { doubts } from './checks';
 import { crossFaults } from './cross';
 import { expectedBy, faultsOf } from './issues';
@@ -15,7 +17,7 @@ export type ReadResult =
 
 const ROOT_FIELDS = ['redpoll', 'production', 'rules', 'weights', ...LISTS];
 /** The head of the file; its rules and weights stand beside it. */
-const head = resources.production.omit({ rules: true, weights: true });
+const headFields = head.production.omit({ rules: true, weights: true });
 const songHead = resources.song.omit({ parts: true });
 /** Pairs of set-ups are many more than anything else. */
 const MOST_CHANGEOVERS = 20_000;
@@ -83,14 +85,14 @@ class Findings {
 
   /** Reads a resource and keeps its unknown fields in `extra`. */
   resource<Schema extends z.ZodType<object>>(schema: Schema) {
-    return (raw: unknown, path: Path): (z.output<Schema> & { extra?: resources.ExtraField[] }) | undefined => {
+    return (raw: unknown, path: Path): (z.output<Schema> & { extra?: ExtraField[] }) | undefined => {
       const { data, unknown } = this.value(schema, raw, path);
       return data && { ...data, ...extraOf(unknown) };
     };
   }
 }
 
-function extraOf(unknown: UnknownField[]): { extra?: resources.ExtraField[] } {
+function extraOf(unknown: UnknownField[]): { extra?: ExtraField[] } {
   return unknown.length > 0 ? { extra: unknown.map(({ path, value }) => ({ path: [...path], value })) } : {};
 }
 
@@ -121,7 +123,7 @@ function readRoot(root: unknown, found: Findings): resources.ProductionFile | un
 }
 
 /** The production with its rules and weights. Paths of its unknown fields begin at the root of the file. */
-function readHead(root: Fields, found: Findings): resources.Production | undefined {
+function readHead(root: Fields, found: Findings): head.Production | undefined {
   const unknown: UnknownField[] = Object.keys(root)
     .filter((key) => !ROOT_FIELDS.includes(key))
     .map((key) => ({ path: [key], value: root[key] }));
@@ -131,9 +133,9 @@ function readHead(root: Fields, found: Findings): resources.Production | undefin
     unknown.push(...part.unknown.map((field) => ({ ...field, path: [key, ...field.path] })));
     return part.data;
   };
-  const production = read(head, 'production');
-  const rules = root.rules === undefined ? undefined : read(resources.rules, 'rules');
-  const weights = root.weights === undefined ? undefined : read(resources.weights, 'weights');
+  const production = read(headFields, 'production');
+  const rules = root.rules === undefined ? undefined : read(head.rules, 'rules');
+  const weights = root.weights === undefined ? undefined : read(head.weights, 'weights');
   return production && { ...production, ...(rules ? { rules } : {}), ...(weights ? { weights } : {}), ...extraOf(unknown) };
 }
 

@@ -1,6 +1,8 @@
 import { Document, isCollection, isMap, isScalar, isSeq, Scalar, visit } from 'yaml';
 import type { z } from 'zod';
+import * as head from '../contracts/head';
 import * as resources from '../contracts/resources';
+import type { ExtraField } from '../contracts/values';
 import { type Fields, isFields, type Path, setOwn } from './paths';
 import { separate } from './unknown';
 
@@ -33,9 +35,9 @@ export function writeProductionFile(file: resources.ProductionFile): string {
 /** The production in the order and shape of the file. */
 function fieldsOf(file: resources.ProductionFile): Fields {
   const { rules, weights, extra, ...production } = file.production;
-  const root: Fields = { redpoll: 1, production: inOrder(resources.production, production) };
-  if (rules) root.rules = inOrder(resources.rules, rules);
-  if (weights) root.weights = inOrder(resources.weights, weights);
+  const root: Fields = { redpoll: 1, production: inOrder(head.production, production) };
+  if (rules) root.rules = inOrder(head.rules, rules);
+  if (weights) root.weights = inOrder(head.weights, weights);
   const list = (name: string, items: Kept[], schema: z.ZodType) => {
     if (items.length > 0) root[name] = items.map((item) => written(schema, item));
   };
@@ -53,7 +55,7 @@ function fieldsOf(file: resources.ProductionFile): Fields {
 }
 
 /** A resource with the unknown fields it came with. */
-type Kept = { extra?: resources.ExtraField[] };
+type Kept = { extra?: ExtraField[] };
 
 /** Fields in the order of the format, whatever order a database kept them in. */
 const inOrder = (schema: z.ZodType, fields: object): unknown => separate(schema, fields).known;
@@ -64,14 +66,14 @@ function written(schema: z.ZodType, resource: Kept): Fields {
 }
 
 function songFields(song: resources.Song): Fields {
-  const { parts, ...head } = song;
-  const fields = written(resources.song, head);
+  const { parts, ...rest } = song;
+  const fields = written(resources.song, rest);
   if (parts) fields.parts = parts.map((part) => written(resources.part, part));
   return fields;
 }
 
 /** Puts unknown fields back. One whose surroundings are gone has nowhere to stand. */
-function restored(fields: Fields, extra: resources.ExtraField[] = []): Fields {
+function restored(fields: Fields, extra: ExtraField[] = []): Fields {
   for (const { path, value } of extra) {
     const key = path.at(-1);
     const owner = ownerAt(fields, path.slice(0, -1));

@@ -1,4 +1,4 @@
-import type { Rules, Weights } from '../contracts/resources';
+import type { Rules, Weights } from '../contracts/head';
 import type { Priority } from '../contracts/values';
 import type { EventId, GearId, Minute, Minutes, PassId, PersonId, RoomId, SetupId, WallDate } from '../domain/flavours';
 

@@ -1,4 +1,4 @@
-import type { Rules } from '../contracts/resources';
+import type { Rules } from '../contracts/head';
 import type { Minutes } from '../domain/flavours';
 
 export type PauseRules = Pick<Required<Rules>, 'meal' | 'mealAfter' | 'break' | 'breakAfter'>;

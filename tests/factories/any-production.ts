@@ -1,5 +1,6 @@
 import fc from 'fast-check';
-import type { ExtraField, ProductionFile } from '../../shared/contracts/resources';
+import type { ProductionFile } from '../../shared/contracts/resources';
+import type { ExtraField } from '../../shared/contracts/values';
 import { unprintableAt } from '../../shared/contracts/values';
 
 /** Random productions that the reader accepts: every kind of row, references that hold, and texts that YAML could misread. */

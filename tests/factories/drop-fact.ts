@@ -1,4 +1,5 @@
-import type { Pass, ProductionFile, Rules } from '../../shared/contracts/resources';
+import type { Rules } from '../../shared/contracts/head';
+import type { Pass, ProductionFile } from '../../shared/contracts/resources';
 
 /** A rule that asks for nothing. */
 const FREE: Required<Omit<Rules, 'listen'>> = {

@@ -1,4 +1,5 @@
-import type { ProductionFile, Rules } from '../../shared/contracts/resources';
+import type { Rules } from '../../shared/contracts/head';
+import type { ProductionFile } from '../../shared/contracts/resources';
 import { hours } from './bare-production';
 
 /** An impossible production, the facts that clash in it, and what the sentence must say. */

@@ -1,4 +1,5 @@
-import type { Pass, Person, ProductionFile, Room, Rules, SessionEvent, Setup } from '../../shared/contracts/resources';
+import type { Rules } from '../../shared/contracts/head';
+import type { Pass, Person, ProductionFile, Room, SessionEvent, Setup } from '../../shared/contracts/resources';
 import { Random } from '../../shared/solver/search/random';
 import { toMinute, toWall } from '../../shared/time/wall';
 

@@ -1,6 +1,8 @@
 import { z } from 'zod';
 import type { Fault } from '../../../shared/contracts/api';
-import { production, rules, weights, type ExtraField, type ResourceName } from '../../../shared/contracts/resources';
+import { production, rules, weights } from '../../../shared/contracts/head';
+import { type ResourceName } from '../../../shared/contracts/resources';
+import { type ExtraField } from '../../../shared/contracts/values';
 import { rowSchemas } from '../../../shared/contracts/rows';
 import { unprintableAt } from '../../../shared/contracts/values';
 import { setOwn } from '../../../shared/file/paths';

@@ -4,7 +4,7 @@ import type { Context } from '../../context';
 import { perAddress } from '../../http/limits';
 import type { Routes } from '../../http/routes';
 import { validate } from '../../http/validate';
-import { production } from '../../../shared/contracts/resources';
+import { production } from '../../../shared/contracts/head';
 import { startingFile } from '../starting-points/service';
 import { blankFile, createProduction, deleteProduction, exportOf, importProduction, listProductions, snapshotOf } from './service';
 import { takeFile, textOf } from './upload';

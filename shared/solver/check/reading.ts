@@ -1,4 +1,5 @@
-import type { Pass, Person, ProductionFile, Room, Rules, SessionEvent, Setup, Gear, Weights } from '../../contracts/resources';
+import type { Rules, Weights } from '../../contracts/head';
+import type { Pass, Person, ProductionFile, Room, SessionEvent, Setup, Gear } from '../../contracts/resources';
 import type { MadePlan, PlanItem } from '../../contracts/plan';
 import { wallTime, type Priority, type ThreePoint } from '../../contracts/values';
 import { DEFAULT_RULES, DEFAULT_WEIGHTS } from '../../domain/defaults';

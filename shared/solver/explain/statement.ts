@@ -1,4 +1,5 @@
-import type { Gear, Pass, Person, ProductionFile, Room, Rules, SessionEvent, Setup } from '../../contracts/resources';
+import type { Rules } from '../../contracts/head';
+import type { Gear, Pass, Person, ProductionFile, Room, SessionEvent, Setup } from '../../contracts/resources';
 import type { Priority } from '../../contracts/values';
 import { DEFAULT_RULES } from '../../domain/defaults';
 import type { EventId, GearId, Minute, Minutes, PassId, PersonId, RoomId, SetupId, WallDate, WallTime } from '../../domain/flavours';

@@ -1,4 +1,5 @@
-import type { Pass, Rules } from '../../contracts/resources';
+import type { Rules } from '../../contracts/head';
+import type { Pass } from '../../contracts/resources';
 import type { Minutes, PassId, PersonId, RoomId } from '../../domain/flavours';
 import type { Place } from './places';
 import type { Edge, EventFacts, Pair, Statement } from './statement';
