@@ -2,7 +2,7 @@ import type { Minute } from '../domain/flavours';
 import { gridAtOrAfter, gridAtOrBefore } from '../solver/grid';
 import { EVER, NEVER, merged, type Dependency, type PassModel, type Problem, type Span, type StartStretch } from '../solver/model';
 import { estimateOf, type EffectivePass } from './derive';
-import { indices, type Reader } from './problem';
+import { indices, type Reader } from './reader';
 
 /** The passes of a problem whose other lists are ready. */
 export function passModels(reader: Reader, passes: readonly EffectivePass[], problem: Problem): PassModel[] {

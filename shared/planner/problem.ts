@@ -1,7 +1,6 @@
 import type { ProductionFile, Room, SessionEvent } from '../contracts/resources';
-import type { Hours } from '../contracts/values';
 import { DEFAULT_RULES, DEFAULT_WEIGHTS } from '../domain/defaults';
-import type { Minute, Minutes, WallDate, WallTime } from '../domain/flavours';
+import type { Minutes, WallDate, WallTime } from '../domain/flavours';
 import {
   merged,
   type EventModel,
@@ -17,29 +16,7 @@ import { SkippedTimeError, zoneClock, type ZoneClock } from '../time/wall';
 import { gridOf, hiddenStretches } from './calendars';
 import { effectivePasses } from './derive';
 import { passModels } from './passes';
-
-/** Turns ids of one list into positions; an id that is not there is -1. */
-export type IndexOf = (id: string | undefined) => number;
-
-function indexOf(list: readonly { id: string }[]): IndexOf {
-  const known = new Map(list.map(({ id }, i) => [id, i]));
-  return (id) => (id === undefined ? -1 : (known.get(id) ?? -1));
-}
-
-/** What the parts of the reading share. */
-export interface Reader {
-  file: ProductionFile;
-  minute(wall: WallTime): Minute;
-  span(window: Hours): Span;
-  room: IndexOf;
-  person: IndexOf;
-  setup: IndexOf;
-  song: IndexOf;
-  gear: IndexOf;
-  event: IndexOf;
-  /** A length rounded up to the step. */
-  rounded(minutes: Minutes): Minutes;
-}
+import { indexOf, indices, type Reader } from './reader';
 
 /**
  * The problem of a production file: defaults applied, wall clock turned into elapsed minutes, calendars merged, lengths rounded up to
@@ -160,12 +137,6 @@ function eventModels(reader: Reader, clock: ZoneClock, days: readonly RoomDay[],
       dateIndex: around ? around.dateIndex : dates.indexOf(dateOf(event.from)),
     };
   });
-}
-
-/** Positions of the ids that exist, in order and each once. */
-export function indices(ids: readonly string[] | undefined, of: IndexOf): number[] {
-  const found = new Set((ids ?? []).map(of).filter((index) => index >= 0));
-  return [...found].sort((a, b) => a - b);
 }
 
 function roomModels(reader: Reader, days: readonly RoomDay[], events: readonly EventModel[]): RoomModel[] {
