@@ -69,7 +69,7 @@ const measure = (score: Score) => score.missing * MISSING + score.total + score.
  */
 export function search(problem: Problem, options: SearchOptions): SearchResult {
   const climber = new Climber(problem, options);
-  const ordered = searchOrder(problem, options);
+  const ordered = searchOrder(problem, options, (solution) => climber.startFrom(solution, 0));
   if (ordered) climber.startFrom(ordered.from, ordered.iterations);
   const proven = ordered?.proven === true && climber.bestScore.missing === 0;
   if (!proven) {
@@ -79,14 +79,18 @@ export function search(problem: Problem, options: SearchOptions): SearchResult {
   return { best: climber.best, score: climber.bestScore, iterations: climber.iterations, proven };
 }
 
-/** The best order of a production that is nothing but one: proven where it has few passes, else annealed until all time is spent. */
-function searchOrder(problem: Problem, options: SearchOptions): OrderResult | null {
+/**
+ * The best order of a production that is nothing but one: proven where it has few passes, else annealed until all time is spent.
+ * @param first hears of the order that the annealing begins with
+ */
+function searchOrder(problem: Problem, options: SearchOptions, first: (solution: Solution) => void): OrderResult | null {
   const sequence = sequenceOf(problem);
   if (!sequence) return null;
   const exact = exactOrder(sequence, options.stop);
   if (exact) return { from: solutionOfOrder(sequence, exact), iterations: 1, proven: true };
   const most = options.iterations ?? Infinity;
   const annealing: SequenceSearch = new SequenceSearch(sequence, new Random(options.seed), () => annealing.tries >= most || options.stop());
+  first(solutionOfOrder(sequence, annealing.best));
   annealing.run(0);
   return { from: solutionOfOrder(sequence, annealing.best), iterations: annealing.tries, proven: false };
 }
